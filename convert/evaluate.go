@@ -1,0 +1,269 @@
+// Package convert evaluates what was written down about a spot: from the
+// readings to their mean, from the mean to every scale that is valid for the
+// metal, each with its uncertainty and its sources. It is pure: no files, no
+// clock, no screen; the same record and edition give the same sheet.
+package convert
+
+import (
+	"errors"
+	"math"
+	"strconv"
+
+	"strikebook/convert/curve"
+	"strikebook/convert/device"
+	"strikebook/convert/metal"
+	"strikebook/convert/record"
+	"strikebook/convert/scale"
+	"strikebook/convert/stats"
+	"strikebook/convert/wording"
+)
+
+// Edition names the data and methods. It changes whenever a sheet could.
+const Edition = "2026.1"
+
+// ISO 16859-1, from memory: check your edition.
+const (
+	leastReadings    = 3   // readings to a mean
+	allowedSpread    = 5.0 // percent of the mean that the readings may spread over,
+	readingsIfSpread = 10  // unless there are this many
+)
+
+// Evaluate evaluates a record. An error says that the record is invalid (see
+// record.Validate); whatever is wrong with the measurement is a finding.
+func Evaluate(r record.Record) (Sheet, error) {
+	if err := r.Validate(); err != nil {
+		return Sheet{}, err
+	}
+	e := newEvaluation(r.Normalized())
+	e.summarize()
+	e.correct()
+	e.findLegs()
+	e.place()
+	e.convert()
+	return e.sheet, nil
+}
+
+// evaluation is a sheet in the making.
+type evaluation struct {
+	record  record.Record
+	device  device.Device // zero where none is chosen, or none took part
+	group   metal.Group   // zero where none is chosen
+	own     scale.Scale   // what the readings are in; zero where unknown
+	summary stats.Summary
+	mean    float64      // corrected; NaN where there is none
+	terms   []stats.Term // uncertainty of the mean as a reading
+
+	legs  []scale.Leg // from HV to the other scales of the metal
+	first *firstLeg   // from the readings to HV; nil where there is none
+	side  Status      // where the mean lies: OK inside the ranges of device and metal
+	hv    float64     // what the mean stands for; NaN where there is none
+
+	sheet Sheet
+}
+
+func newEvaluation(r record.Record) *evaluation {
+	e := &evaluation{record: r, mean: math.NaN(), hv: math.NaN(), side: OK}
+	e.own, _ = scale.ByKey(r.Scale)
+	e.group, _ = metal.ByKey(r.Group)
+	if e.own.Leeb {
+		e.device, _ = device.ByScale(string(e.own.Key))
+	}
+	e.sheet = Sheet{
+		Edition:  Edition,
+		Scale:    r.Scale,
+		Readings: Readings{Suspect: []int{}},
+		Scales:   []Row{},
+		Findings: []Finding{},
+	}
+	return e
+}
+
+// find adds a finding.
+func (e *evaluation) find(code, field string, params wording.Params) {
+	s := wording.Say(code, params)
+	e.sheet.Findings = append(e.sheet.Findings, Finding{
+		Code: code, Level: s.Kind, Field: field, Message: s.Message, Remedy: s.Remedy, Params: params, Source: s.Source,
+	})
+}
+
+// stopped reports whether a finding forbids converted values.
+func (e *evaluation) stopped() bool {
+	for _, f := range e.sheet.Findings {
+		if f.Level == wording.Stop {
+			return true
+		}
+	}
+	return false
+}
+
+// summarize describes the readings, and judges them as a set.
+func (e *evaluation) summarize() {
+	for i, reading := range e.record.Readings {
+		if reading.Struck != "" {
+			e.sheet.Readings.Struck++
+			continue
+		}
+		if !reading.Value.Valid() {
+			e.find("not-a-reading", field("readings", i), wording.Params{
+				"number": float64(i + 1), "text": reading.Value.String(), "highest": float64(record.GreatestReading)})
+		}
+	}
+	values, positions := e.record.Counting()
+	e.summary = stats.Summarize(values)
+	s := &e.sheet.Readings
+	s.N = e.summary.N
+	s.Mean, s.SD = number(e.summary.Mean), number(e.summary.SD)
+	s.Min, s.Max = number(e.summary.Min), number(e.summary.Max)
+	percent := e.summary.Range / e.summary.Mean * 100
+	s.Range, s.RangePercent = number(e.summary.Range), number(percent)
+	if s.N > 0 && e.own.Key != "" {
+		s.ShownMean = e.own.Notation(e.own.Quote(e.summary.Mean), e.own.Key)
+	}
+	if s.SD != nil {
+		s.ShownSD = strconv.FormatFloat(*s.SD, 'f', e.own.Decimals+1, 64)
+	}
+	e.judgeReadings(values, positions, percent)
+	e.budgetReadings()
+}
+
+func (e *evaluation) judgeReadings(values []float64, positions []int, percent float64) {
+	n := e.summary.N
+	if n < leastReadings {
+		e.find("too-few-readings", "readings", wording.Params{
+			"n": float64(n), "least": float64(leastReadings), "more": float64(leastReadings - n)})
+	}
+	if percent > allowedSpread && n < readingsIfSpread {
+		e.find("spread-too-wide", "readings", wording.Params{
+			"percent": percent, "limit": allowedSpread, "n": float64(n),
+			"least": float64(readingsIfSpread), "more": float64(readingsIfSpread - n)})
+	}
+	if outlier := stats.Grubbs(values); outlier.Suspect {
+		at := positions[outlier.Index]
+		e.sheet.Readings.Suspect = []int{at}
+		e.find("suspect-reading", field("readings", at), wording.Params{
+			"number": float64(at + 1), "value": values[outlier.Index], "g": outlier.G, "critical": outlier.Critical})
+	}
+}
+
+// budgetReadings sets up the uncertainty of the mean as a reading.
+func (e *evaluation) budgetReadings() {
+	if e.summary.N == 0 {
+		return
+	}
+	e.terms = []stats.Term{
+		e.repeatability(),
+		{
+			Name: "resolution", Standard: stats.Rectangular(e.own.DisplayStep / 2), DoF: stats.Infinite,
+			Source: "Half the step of a usual display, rectangular (common practice, no source)",
+		},
+	}
+	for i := range e.terms {
+		e.terms[i].Scale, e.terms[i].Sensitivity = string(e.own.Key), 1
+	}
+}
+
+// repeatability is the uncertainty of the mean from the scatter of the
+// readings. Fewer than three say too little about their scatter (two equal ones
+// would seem certain), so that the spread ISO 16859-1 allows is assumed, unless
+// theirs is larger.
+func (e *evaluation) repeatability() stats.Term {
+	n := e.summary.N
+	measured := stats.Term{
+		Name: "repeatability", Standard: e.summary.StandardError, DoF: stats.DoF(n - 1),
+		Source: "Standard deviation of the mean of the readings, JCGM 100, 4.2",
+	}
+	if n >= leastReadings {
+		return measured
+	}
+	assumed := stats.Rectangular(allowedSpread/100*e.summary.Mean/2) / math.Sqrt(float64(n))
+	if measured.Standard > assumed { // false for NaN
+		return measured
+	}
+	return stats.Term{
+		Name: "repeatability", Standard: assumed, DoF: stats.Infinite,
+		Source: "Assumed: readings anywhere within the spread of 5 % that ISO 16859-1 allows, from memory",
+	}
+}
+
+// correct brings the mean to what it would be vertically down.
+func (e *evaluation) correct() {
+	if e.own.Key == "" {
+		e.find("no-device", "device", wording.Params{})
+	}
+	if e.summary.N == 0 {
+		return
+	}
+	mean := e.summary.Mean
+	if direction := e.record.Direction; e.own.Leeb && direction.NeedsCorrection() {
+		if !e.device.Corrects() {
+			e.find("no-direction-correction", "direction", wording.Params{"device": e.device.Key})
+			return
+		}
+		add, ok := device.Correction(direction, mean)
+		if !ok {
+			lo, hi := device.CorrectionRange()
+			e.find("direction-outside-table", "direction", wording.Params{
+				"lo": lo, "hi": hi, "scale": e.device.Scale, "mean": mean})
+			return
+		}
+		e.sheet.Corrected.Direction = add
+		mean += add
+	}
+	e.mean = mean
+	e.sheet.Corrected.Mean = number(mean)
+}
+
+// findLegs finds what leads from the readings to HV on the metal, and from HV
+// to its other scales.
+func (e *evaluation) findLegs() {
+	if e.group.Key == "" {
+		e.find("no-metal", "group", wording.Params{})
+		return
+	}
+	e.legs = scale.Legs(e.group)
+	if e.own.Key != "" {
+		e.first = e.findFirstLeg()
+	}
+}
+
+// place finds the hardness that the mean stands for.
+func (e *evaluation) place() {
+	if math.IsNaN(e.mean) {
+		return
+	}
+	if d := e.device; d.Key != "" && (e.mean < d.Lo || e.mean > d.Hi) {
+		e.side = sideOf(e.mean > d.Hi)
+		e.find("outside-device-range", "readings", wording.Params{
+			"mean": e.mean, "scale": d.Scale, "device": d.Key, "lo": d.Lo, "hi": d.Hi})
+		return
+	}
+	if e.first == nil {
+		return
+	}
+	hv, err := e.first.At(e.mean)
+	if outside := (*curve.OutsideError)(nil); errors.As(err, &outside) {
+		e.side = sideOf(outside.Above())
+		e.findOutside(outside)
+		return
+	}
+	e.hv = hv
+}
+
+func sideOf(above bool) Status {
+	if above {
+		return Above
+	}
+	return Below
+}
+
+func (e *evaluation) findOutside(outside *curve.OutsideError) {
+	params := wording.Params{"mean": e.mean, "scale": string(e.own.Key), "lo": outside.Lo, "hi": outside.Hi}
+	code := "outside-scale-range"
+	if e.own.Leeb || e.own.Key == scale.HV {
+		code = "outside-metal-range"
+		params["lo"], params["hi"], params["metal"] = e.group.Lo, e.group.Hi, e.group.Name
+	}
+	e.find(code, "readings", params)
+}
+
+func field(list string, i int) string { return list + "[" + strconv.Itoa(i) + "]" }

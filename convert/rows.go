@@ -1,0 +1,194 @@
+package convert
+
+import (
+	"math"
+	"slices"
+
+	"strikebook/convert/curve"
+	"strikebook/convert/scale"
+	"strikebook/convert/stats"
+	"strikebook/convert/wording"
+)
+
+// convert writes the rows of the sheet: the reading's own scale, then every
+// scale readings can be converted to, with a value or the reason for none.
+func (e *evaluation) convert() {
+	e.sheet.Uncertainty = e.combineReading()
+	if e.own.Key != "" {
+		e.addRow(e.ownRow())
+	}
+	for _, s := range scale.Converted() {
+		if s.Key != e.own.Key {
+			e.addRow(e.convertedRow(s))
+		}
+	}
+}
+
+func (e *evaluation) addRow(r Row) { e.sheet.Scales = append(e.sheet.Scales, r) }
+
+// combineReading is the uncertainty of the mean as a measure of hardness: the
+// readings and the first leg, in the reading's scale.
+func (e *evaluation) combineReading() *stats.Uncertainty {
+	if e.summary.N == 0 {
+		return nil
+	}
+	terms := slices.Clone(e.terms)
+	if !math.IsNaN(e.hv) {
+		terms = append(terms, e.first.terms(e.mean, e.hv)...)
+	}
+	u := stats.Combine(terms, e.record.Confidence)
+	return &u
+}
+
+// ownRow is the row of the scale the readings are in: nothing is converted.
+func (e *evaluation) ownRow() Row {
+	r := newRow(e.own)
+	r.Device = e.device.Key
+	r.setRange(e.own, e.own.Lo, e.own.Hi)
+	if e.first != nil {
+		lo, hi := e.first.Domain()
+		r.setRange(e.own, lo, hi)
+	}
+	switch {
+	case e.summary.N == 0:
+		r.refuse(None, "scale-no-readings", nil)
+	case e.side != OK:
+		e.refuseSide(&r, e.side)
+	case math.IsNaN(e.mean):
+		r.refuse(None, "scale-withheld", nil)
+	default:
+		r.Path = []scale.Step{measuredStep(e.own.Key)}
+		r.accept(e.own, e.own.Key, e.mean, stats.Combine(e.terms, e.record.Confidence))
+	}
+	return r
+}
+
+// convertedRow is the row of a scale the mean is converted to.
+func (e *evaluation) convertedRow(s scale.Scale) Row {
+	r := newRow(s)
+	leg, ok := e.legTo(s)
+	if !ok {
+		code := "scale-no-table"
+		if e.group.Key == "" {
+			code = "scale-withheld"
+		}
+		r.refuse(None, code, wording.Params{"scale": string(s.Key)})
+		return r
+	}
+	r.Method = leg.Method
+	lo, hi, ok := e.reach(leg)
+	if !ok {
+		r.refuse(None, "scale-outside", wording.Params{"scale": string(s.Key)})
+		return r
+	}
+	r.setRange(s, lo, hi)
+	switch {
+	case e.summary.N == 0:
+		r.refuse(None, "scale-no-readings", nil)
+	case e.side != OK:
+		e.refuseSide(&r, e.side)
+	case e.stopped() || math.IsNaN(e.hv):
+		r.refuse(None, "scale-withheld", nil)
+	default:
+		e.fill(&r, leg)
+	}
+	return r
+}
+
+// legTo returns the leg from HV to a scale on the metal.
+func (e *evaluation) legTo(s scale.Scale) (scale.Leg, bool) {
+	if e.group.Key == "" {
+		return scale.Leg{}, false
+	}
+	if s.Key == scale.HV {
+		return scale.ToItself(s, e.group.Lo, e.group.Hi), true
+	}
+	i := slices.IndexFunc(e.legs, func(l scale.Leg) bool { return l.Scale.Key == s.Key })
+	if i < 0 {
+		return scale.Leg{}, false
+	}
+	return e.legs[i], true
+}
+
+// reach returns the least and the greatest value that the readings' scale can
+// lead to over a leg. ok is false where it leads to none.
+func (e *evaluation) reach(leg scale.Leg) (lo, hi float64, ok bool) {
+	from, to := e.group.Lo, e.group.Hi
+	if e.first != nil {
+		from, to = curve.Values(e.first)
+	}
+	return leg.Span(from, to)
+}
+
+// fill gives a row its value: over the first leg to HV, over the second to the scale.
+func (e *evaluation) fill(r *Row, leg scale.Leg) {
+	v, err := leg.At(e.hv)
+	if outside, ok := err.(*curve.OutsideError); ok {
+		e.refuseSide(r, sideOf(outside.Above()))
+		return
+	}
+	slope, err := e.first.Slope(e.mean)
+	if err != nil {
+		panic(err) // place has found the mean inside the first leg
+	}
+	terms := slices.Clone(e.terms)
+	terms = append(terms, e.first.terms(e.mean, e.hv)...)
+	for i := range terms {
+		terms[i].Sensitivity *= slope * v.Slope
+	}
+	r.Path = e.first.steps(e.hv)
+	if leg.Scale.Key != scale.HV {
+		terms = append(terms, secondLegTerm(leg, e.hv))
+		r.Path = append(r.Path, leg.Steps(e.hv)...)
+	}
+	r.accept(leg.Scale, e.own.Key, v.Value, stats.Combine(terms, e.record.Confidence))
+}
+
+func newRow(s scale.Scale) Row {
+	return Row{
+		Scale: s.Key, Name: s.Name, Method: string(s.Key), Status: None, Decimals: s.Decimals, DoF: stats.Infinite,
+		Terms: []stats.Term{}, Range: []float64{}, ShownRange: []string{}, Path: []scale.Step{}, ReasonParams: wording.Params{},
+	}
+}
+
+func (r *Row) setRange(s scale.Scale, lo, hi float64) {
+	r.Range = []float64{lo, hi}
+	r.ShownRange = []string{s.QuoteUp(lo), s.QuoteDown(hi)}
+}
+
+// refuse says why the row has no value.
+func (r *Row) refuse(status Status, code string, params wording.Params) {
+	r.Status = status
+	r.ReasonCode = code
+	if params != nil {
+		r.ReasonParams = params
+	}
+	r.Reason = wording.Say(code, params).Message
+}
+
+// refuseSide refuses a row whose range the spot lies below or above.
+func (e *evaluation) refuseSide(r *Row, side Status) {
+	params := wording.Params{"scale": string(r.Scale), "lo": r.ShownRange[0], "hi": r.ShownRange[1]}
+	r.refuse(side, "scale-"+string(side), params)
+}
+
+// accept gives the row its value.
+func (r *Row) accept(s scale.Scale, measured scale.Key, value float64, u stats.Uncertainty) {
+	r.Status = OK
+	r.Value, r.Standard, r.Expanded, r.K = &value, &u.Standard, &u.Expanded, &u.K
+	r.DoF, r.Terms = u.DoF, u.Terms
+	low, high := value-u.Expanded, value+u.Expanded
+	r.LowCut, r.HighCut = low < r.Range[0], high > r.Range[1]
+	low, high = max(low, r.Range[0]), min(high, r.Range[1])
+	r.Low, r.High = &low, &high
+	r.ShownValue = s.Quote(value)
+	r.Shown = s.Notation(r.ShownValue, measured)
+	r.ShownExpanded = s.QuoteUp(u.Expanded)
+	r.ShownLow, r.ShownHigh = s.QuoteDown(low), s.QuoteUp(high)
+	if r.LowCut {
+		r.ShownLow = r.ShownRange[0]
+	}
+	if r.HighCut {
+		r.ShownHigh = r.ShownRange[1]
+	}
+}

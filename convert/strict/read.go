@@ -1,0 +1,340 @@
+package strict
+
+import (
+	"bytes"
+	"fmt"
+	"reflect"
+	"slices"
+	"strconv"
+	"strings"
+	"unicode/utf16"
+	"unicode/utf8"
+)
+
+// Unmarshal reads one JSON value into what v points to. An error is an *Error.
+// null leaves a value as it is, and makes a pointer nil.
+func Unmarshal(data []byte, v any) error {
+	r := reader{data: data}
+	if err := r.value(reflect.ValueOf(v).Elem()); err != nil {
+		return err
+	}
+	if r.space(); r.at < len(data) {
+		return r.syntax("the end")
+	}
+	return nil
+}
+
+// reader reads JSON from left to right. How deep it goes is bounded by the
+// types it reads into, not by the input.
+type reader struct {
+	data []byte
+	at   int
+}
+
+func (r *reader) space() {
+	for r.at < len(r.data) && strings.IndexByte(" \t\r\n", r.data[r.at]) >= 0 {
+		r.at++
+	}
+}
+
+// next returns the next byte that is no space, 0 at the end.
+func (r *reader) next() byte {
+	if r.space(); r.at < len(r.data) {
+		return r.data[r.at]
+	}
+	return 0
+}
+
+// take steps over a byte if it comes next.
+func (r *reader) take(c byte) bool {
+	if r.next() != c {
+		return false
+	}
+	r.at++
+	return true
+}
+
+func (r *reader) syntax(want string) error {
+	return &Error{Problem: Syntax, Want: want, Got: r.excerpt(r.at)}
+}
+
+// wrong refuses the value that begins at a place.
+func (r *reader) wrong(start int, want string) error {
+	return &Error{Problem: WrongType, Want: want, Got: r.excerpt(start)}
+}
+
+// excerpt is what stands at a place, as far as it helps to find it.
+func (r *reader) excerpt(start int) string {
+	const most = 40
+	rest := bytes.TrimSpace(r.data[min(start, len(r.data)):])
+	switch {
+	case len(rest) == 0:
+		return "nothing"
+	case rest[0] != '{' && rest[0] != '[':
+		if end := bytes.IndexAny(rest, ",]}\n"); end > 0 {
+			rest = rest[:end]
+		}
+	}
+	if len(rest) > most {
+		return strings.ToValidUTF8(string(rest[:most]), "") + "…"
+	}
+	return strings.ToValidUTF8(string(rest), "\uFFFD")
+}
+
+func (r *reader) value(v reflect.Value) error {
+	first := r.next()
+	start := r.at
+	if reflect.PointerTo(v.Type()).Implements(unmarshaler) {
+		return r.itself(v.Addr().Interface().(Unmarshaler))
+	}
+	if first == 'n' {
+		return r.word("null")
+	}
+	switch v.Kind() {
+	case reflect.Pointer:
+		v.Set(reflect.New(v.Type().Elem()))
+		return r.value(v.Elem())
+	case reflect.Struct:
+		return r.object(v)
+	case reflect.Slice:
+		return r.list(v)
+	case reflect.String:
+		if first != '"' {
+			return r.wrong(start, "a text")
+		}
+		text, err := r.text()
+		v.SetString(text)
+		return err
+	case reflect.Int:
+		literal, err := r.number("a whole number")
+		if err != nil {
+			return err
+		}
+		n, err := strconv.ParseInt(literal, 10, 0)
+		if err != nil {
+			return r.wrong(start, "a whole number")
+		}
+		v.SetInt(n)
+		return nil
+	case reflect.Float64:
+		literal, err := r.number("a number")
+		if err != nil {
+			return err
+		}
+		n, err := strconv.ParseFloat(literal, 64)
+		if err != nil {
+			return r.wrong(start, "a number within bounds")
+		}
+		v.SetFloat(n)
+		return nil
+	}
+	panic(fmt.Sprintf("strict cannot read into %s", v.Type()))
+}
+
+// itself hands a scalar to a type that reads itself.
+func (r *reader) itself(u Unmarshaler) error {
+	var err error
+	start := r.at
+	switch c := r.next(); {
+	case c == '"':
+		_, err = r.text()
+	case c == 'n':
+		err = r.word("null")
+	case c == 't':
+		err = r.word("true")
+	case c == 'f':
+		err = r.word("false")
+	case c != '{' && c != '[':
+		_, err = r.number("a value")
+	}
+	if err != nil {
+		return err
+	}
+	if r.at == start {
+		return r.wrong(start, "a number or a text")
+	}
+	if err := u.UnmarshalJSON(r.data[start:r.at]); err != nil {
+		return r.wrong(start, err.Error())
+	}
+	return nil
+}
+
+func (r *reader) word(word string) error {
+	if !bytes.HasPrefix(r.data[r.at:], []byte(word)) {
+		return r.syntax(word)
+	}
+	r.at += len(word)
+	return nil
+}
+
+func (r *reader) object(v reflect.Value) error {
+	if !r.take('{') {
+		return r.wrong(r.at, "an object")
+	}
+	if r.take('}') {
+		return nil
+	}
+	known := fieldsOf(v.Type())
+	seen := make([]bool, len(known))
+	for {
+		if r.next() != '"' {
+			return r.syntax("a name in quotes")
+		}
+		name, err := r.text()
+		if err != nil {
+			return err
+		}
+		i := slices.IndexFunc(known, func(f field) bool { return f.name == name })
+		switch {
+		case i < 0:
+			return &Error{Problem: Unknown, Path: name, Want: "a known field", Got: name}
+		case seen[i]:
+			return &Error{Problem: Duplicate, Path: name, Want: "the field once", Got: name}
+		case !r.take(':'):
+			return r.syntax("a colon")
+		}
+		seen[i] = true
+		if err := r.value(v.Field(i)); err != nil {
+			return within(err, name)
+		}
+		if !r.take(',') {
+			break
+		}
+	}
+	if !r.take('}') {
+		return r.syntax("a comma or }")
+	}
+	return nil
+}
+
+func (r *reader) list(v reflect.Value) error {
+	if !r.take('[') {
+		return r.wrong(r.at, "a list")
+	}
+	v.Set(reflect.MakeSlice(v.Type(), 0, 0))
+	if r.take(']') {
+		return nil
+	}
+	for {
+		element := reflect.New(v.Type().Elem()).Elem()
+		if err := r.value(element); err != nil {
+			return within(err, "["+strconv.Itoa(v.Len())+"]")
+		}
+		v.Set(reflect.Append(v, element))
+		if !r.take(',') {
+			break
+		}
+	}
+	if !r.take(']') {
+		return r.syntax("a comma or ]")
+	}
+	return nil
+}
+
+// number steps over a number and returns it as it stands.
+func (r *reader) number(want string) (string, error) {
+	start := r.at
+	digits := func() bool {
+		from := r.at
+		for r.at < len(r.data) && r.data[r.at] >= '0' && r.data[r.at] <= '9' {
+			r.at++
+		}
+		return r.at > from
+	}
+	is := func(set string) bool {
+		if r.at < len(r.data) && strings.IndexByte(set, r.data[r.at]) >= 0 {
+			r.at++
+			return true
+		}
+		return false
+	}
+	is("-")
+	whole := is("0") || digits()
+	if !whole || is(".") && !digits() {
+		return "", r.notNumber(start, want)
+	}
+	if is("eE") {
+		is("+-")
+		if !digits() {
+			return "", r.notNumber(start, want)
+		}
+	}
+	return string(r.data[start:r.at]), nil
+}
+
+// notNumber tells a value of another type from a number that is malformed.
+func (r *reader) notNumber(start int, want string) error {
+	if r.at == start && r.at < len(r.data) && strings.IndexByte(`"{[tf`, r.data[start]) >= 0 {
+		return r.wrong(start, want)
+	}
+	r.at = start
+	return r.syntax(want)
+}
+
+// text reads a string. Bytes that are no UTF-8 become U+FFFD.
+func (r *reader) text() (string, error) {
+	var b []byte
+	for r.at++; r.at < len(r.data); {
+		switch c := r.data[r.at]; {
+		case c == '"':
+			r.at++
+			return strings.ToValidUTF8(string(b), "\uFFFD"), nil
+		case c < ' ':
+			return "", r.syntax("no control character in a text")
+		case c != '\\':
+			b = append(b, c)
+			r.at++
+		default:
+			escaped, ok := r.escape()
+			if !ok {
+				return "", r.syntax("a valid escape")
+			}
+			b = utf8.AppendRune(b, escaped)
+		}
+	}
+	return "", r.syntax("a closing quote")
+}
+
+// escape reads what a backslash introduces.
+func (r *reader) escape() (rune, bool) {
+	if r.at+1 >= len(r.data) {
+		return 0, false
+	}
+	c := r.data[r.at+1]
+	if c == 'u' {
+		return r.unicode()
+	}
+	i := strings.IndexByte(`"\/bfnrt`, c)
+	if i < 0 {
+		return 0, false
+	}
+	r.at += 2
+	return rune("\"\\/\b\f\n\r\t"[i]), true
+}
+
+// unicode reads \uXXXX, or two of them that make a surrogate pair.
+func (r *reader) unicode() (rune, bool) {
+	first, ok := r.hex(r.at)
+	if !ok {
+		return 0, false
+	}
+	r.at += 6
+	if utf16.IsSurrogate(first) {
+		if second, ok := r.hex(r.at); ok {
+			if pair := utf16.DecodeRune(first, second); pair != utf8.RuneError {
+				r.at += 6
+				return pair, true
+			}
+		}
+		return utf8.RuneError, true
+	}
+	return first, true
+}
+
+func (r *reader) hex(at int) (rune, bool) {
+	if at+6 > len(r.data) || r.data[at] != '\\' || r.data[at+1] != 'u' {
+		return 0, false
+	}
+	n, err := strconv.ParseUint(string(r.data[at+2:at+6]), 16, 16)
+	return rune(n), err == nil
+}

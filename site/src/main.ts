@@ -1,0 +1,3 @@
+// Where the page starts.
+
+import "./app";

@@ -1,0 +1,53 @@
+// The record in work: how it begins, and what each action of the user makes of
+// it. A record is never changed, but replaced.
+
+import { catalogue } from "../gen/catalogue";
+import type * as core from "../gen/contract";
+
+export function blank(like?: core.Record): core.Record {
+  // The next spot of a job is measured as the last one was; nothing else is kept.
+  const { device = "D", scale = "HLD", direction = "down", group, job, by, serial } = like ?? {};
+  return { v: catalogue.recordVersion, id: newId(), device, scale, direction, group, job, by, serial, readings: [] };
+}
+
+function newId(): string {
+  const letters = crypto.getRandomValues(new Uint8Array(8));
+  return Array.from(letters, (n) => (n % 36).toString(36)).join("");
+}
+
+/** Whether the user has put anything into a record yet. */
+export function untouched(record: core.Record): boolean {
+  return record.readings.length === 0 && !record.label;
+}
+
+export function add(record: core.Record, values: (number | string)[]): core.Record {
+  if (values.length === 0) return record;
+  const taken = record.taken ?? new Date().toISOString().replace(/\.\d+/, "");
+  return { ...record, taken, readings: [...record.readings, ...values.map((value) => ({ value }))] };
+}
+
+/** Takes the last reading back. Its text returns to the field. */
+export function takeBack(record: core.Record): { record: core.Record; text: string } {
+  const last = record.readings.at(-1);
+  return { record: { ...record, readings: record.readings.slice(0, -1) }, text: String(last?.value ?? "") };
+}
+
+/** Strikes a reading for a reason; without one, it counts again. */
+export function strike(record: core.Record, at: number, reason?: string): core.Record {
+  const readings = record.readings.map((reading, i) =>
+    i === at ? { value: reading.value, ...(reason ? { struck: reason } : {}) } : reading,
+  );
+  return { ...record, readings };
+}
+
+/** Chooses what the readings are taken with: a device, or a direct method's scale. */
+export function measureWith(record: core.Record, scale: string): core.Record {
+  const device = catalogue.devices.find((d) => d.scale === scale);
+  const direction = device?.directions.find((d) => d === record.direction) ?? "down";
+  return { ...record, device: device?.key, scale, direction };
+}
+
+/** Whether three digits make a reading: in a Leeb scale they do. */
+export function flows(record: core.Record): boolean {
+  return catalogue.scales.some((scale) => scale.key === record.scale && scale.leeb);
+}
