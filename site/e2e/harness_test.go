@@ -381,13 +381,6 @@ func element(selector string) string {
 	return expression
 }
 
-// text is the visible text of an element.
-func (w *window) text(selector string) string {
-	w.t.Helper()
-	w.waitFor(element(selector))
-	return eval[string](w, element(selector)+".innerText")
-}
-
 // waitForText waits until the visible text of an element contains some words.
 func (w *window) waitForText(selector, words string) {
 	w.t.Helper()
@@ -401,13 +394,22 @@ func (w *window) waitForText(selector, words string) {
 // tap touches an element. It needs a device with touch.
 func (w *window) tap(selector string) {
 	w.t.Helper()
+	w.reveal(selector)
 	w.do(chromedp.Tap(chromedp.JSPath(element(selector)), chromedp.NodeVisible))
 }
 
 // click clicks on an element with the mouse.
 func (w *window) click(selector string) {
 	w.t.Helper()
+	w.reveal(selector)
 	w.do(chromedp.Click(chromedp.JSPath(element(selector)), chromedp.NodeVisible))
+}
+
+// reveal scrolls an element to where nothing lies over it.
+func (w *window) reveal(selector string) {
+	w.t.Helper()
+	w.waitFor(element(selector))
+	eval[bool](w, "("+element(selector)+".scrollIntoView({ block: 'center', behavior: 'instant' }), true)")
 }
 
 // focus puts the cursor into an element.
@@ -467,13 +469,6 @@ func (w *window) seenProblems() []string {
 	w.mu.Lock()
 	defer w.mu.Unlock()
 	return slices.Clone(w.problems)
-}
-
-// forgetProblems is for tests that cause problems on purpose.
-func (w *window) forgetProblems() {
-	w.mu.Lock()
-	defer w.mu.Unlock()
-	w.problems = nil
 }
 
 // checkClean fails the test if anything went wrong in the page so far or any

@@ -32,7 +32,10 @@ export class AppElement extends LitElement {
         display: flex;
         align-items: center;
         gap: 0.75rem;
-        padding: 0.75rem 1rem 0.25rem;
+        width: 100%;
+        max-width: 72rem;
+        margin: 0 auto;
+        padding: 0.6rem 0.75rem 0;
       }
       header img {
         width: 2.5rem;
@@ -81,7 +84,10 @@ export class AppElement extends LitElement {
       @media (min-width: 60rem) {
         main {
           grid-template-columns: 1fr 1fr;
-          padding: 0.5rem 1rem 1rem;
+          padding: 0.75rem 1rem 1rem;
+        }
+        header {
+          padding-inline: 1rem;
         }
         #notices {
           grid-column: 1 / -1;
@@ -147,7 +153,7 @@ export class AppElement extends LitElement {
         <img src="icon.svg" alt="" />
         <div>
           <h1>${say("app.name")}</h1>
-          <p class="soft">${say("app.purpose")}</p>
+          <p class="soft" id=${this.kept ? "offline" : "purpose"}>${say(this.kept ? "offline.ready" : "app.purpose")}</p>
         </div>
       </header>
       <main>
@@ -194,7 +200,6 @@ export class AppElement extends LitElement {
         : "",
       this.switchNow ? notice("update", say("update.waiting"), [["switch", say("update.switch"), this.switchNow]]) : "",
       this.storeFailed ? notice("unkept", say("store.failed"), [], true) : "",
-      this.kept ? html`<p class="soft" id="offline">${say("offline.ready")}</p>` : "",
     ].filter((part) => part !== "");
   }
 

@@ -78,7 +78,7 @@ export class ReadingsElement extends LitElement {
   @state() private opened: number | undefined;
   @state() private reasonMissing = false;
   @query("#entry") private field!: HTMLInputElement;
-  @query("#reason") private reason: HTMLInputElement | null = null;
+  @query("#reason") private reason!: HTMLInputElement | null;
 
   override render() {
     const flow = flows(this.record);
@@ -174,6 +174,11 @@ export class ReadingsElement extends LitElement {
 
   /** Takes typed text in: whole readings join the list, the rest stays. */
   private typed(text: string): void {
+    if (/^[.,]$/.test(text) && this.record.readings.length > 0 && flows(this.record)) {
+      // The reading that three digits have just made goes on behind its point.
+      this.reopen((last) => last + text);
+      return;
+    }
     const { readings, rest } = split(text, flows(this.record));
     this.take(readings, rest);
   }
@@ -185,17 +190,11 @@ export class ReadingsElement extends LitElement {
   }
 
   private key(event: KeyboardEvent): void {
-    const { key } = event;
-    const empty = this.field.value === "";
-    if (key === "Enter") {
+    if (event.key === "Enter") {
       this.take(splitAll(this.field.value, flows(this.record)), "");
-    } else if (key === "Backspace" && empty && this.record.readings.length > 0) {
+    } else if (event.key === "Backspace" && this.field.value === "" && this.record.readings.length > 0) {
       event.preventDefault();
       this.back();
-    } else if ((key === "." || key === ",") && empty && this.record.readings.length > 0 && flows(this.record)) {
-      // The reading that three digits have just made goes on behind its point.
-      event.preventDefault();
-      this.reopen((text) => text + key);
     }
   }
 

@@ -1,6 +1,6 @@
 // The spot and its metal: what the readings are taken on, and with.
 
-import { LitElement, html } from "lit";
+import { LitElement, css, html } from "lit";
 import { customElement, property } from "lit/decorators.js";
 import { catalogue } from "../gen/catalogue";
 import type * as core from "../gen/contract";
@@ -11,7 +11,16 @@ import { measureWith } from "./draft";
 
 @customElement("strike-spot")
 export class SpotElement extends LitElement {
-  static override styles = look;
+  static override styles = [
+    look,
+    css`
+      .pair {
+        display: grid;
+        grid-template-columns: repeat(auto-fit, minmax(9rem, 1fr));
+        gap: 0 0.5rem;
+      }
+    `,
+  ];
   @property({ attribute: false }) record!: core.Record;
 
   override render() {
@@ -37,7 +46,7 @@ export class SpotElement extends LitElement {
           )}
         </select>
       </label>
-      <label
+      <div class="pair"><label
         >${say("spot.measured")}
         <select id="measured" @change=${(e: Event) => this.send(measureWith(this.record, chosen(e)))}>
           <optgroup label=${say("spot.measured.device")}>
@@ -50,7 +59,7 @@ export class SpotElement extends LitElement {
           </optgroup>
         </select>
       </label>
-      ${this.direction()}
+      ${this.direction()}</div>
     </section>`;
   }
 

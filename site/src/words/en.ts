@@ -6,14 +6,14 @@ import { sentences } from "../gen/sentences";
 
 const own = {
   "app.name": "Strikebook",
-  "app.purpose": "Rebound hardness on site: readings to scales, with their uncertainty.",
+  "app.purpose": "Rebound readings on site, decided with their doubt in the open.",
   "app.edition": "Data edition {edition}, build {build}.",
 
   "core.loading": "Loading the calculation: {percent:0} %",
   "core.failed": "The calculation could not be loaded ({detail}). What you type is kept. Check the connection, then retry.",
   "core.lost": "The calculation stopped twice over this sheet. What you typed is kept. Change the last entry, or retry.",
   "core.retry": "Retry",
-  "offline.ready": "Kept on this device: works without a network.",
+  "offline.ready": "Works without a network.",
   "update.waiting": "A new version is ready. Your sheet stays as it is.",
   "update.switch": "Switch now",
   "store.failed": "This browser keeps nothing for this page. Copy the link of the sheet before you close it.",
@@ -74,8 +74,8 @@ const own = {
   "result.title": "Result",
   "result.empty": "Enter readings to see the result.",
   "result.mean": "Mean",
-  "result.count": "{n} readings count",
-  "result.count.struck": "{n} readings count, {struck} struck",
+  "result.count": "Readings that count: {n}",
+  "result.count.struck": "Readings that count: {n}, struck: {struck}",
   "result.sd": "Standard deviation {sd}",
   "result.spread": "Spread {percent:1} % of the mean",
   "result.corrected": "Corrected to vertically down by {direction:0} {scale}",
