@@ -137,7 +137,7 @@ func (e *evaluation) judgeReadings(values []float64, positions []int, percent fl
 			"percent": percent, "limit": allowedSpread, "n": float64(n),
 			"least": float64(readingsIfSpread), "more": float64(readingsIfSpread - n)})
 	}
-	if outlier := stats.Grubbs(values); outlier.Suspect {
+	if outlier := stats.Grubbs(values, e.own.DisplayStep); outlier.Suspect {
 		at := positions[outlier.Index]
 		e.sheet.Readings.Suspect = []int{at}
 		e.find("suspect-reading", field("readings", at), wording.Params{
@@ -237,6 +237,11 @@ func (e *evaluation) place() {
 			"mean": e.mean, "scale": d.Scale, "device": d.Key, "lo": d.Lo, "hi": d.Hi})
 		return
 	}
+	if lo, hi := e.ownRange(); e.own.Key != "" && (e.mean < lo || e.mean > hi) {
+		e.side = sideOf(e.mean > hi)
+		e.findOutside(&curve.OutsideError{Value: e.mean, Lo: lo, Hi: hi})
+		return
+	}
 	if e.first == nil {
 		return
 	}
@@ -249,6 +254,12 @@ func (e *evaluation) place() {
 	e.hv = hv
 }
 
+// ownRange is the range of the scale the readings are in. Where the scale has
+// no end of its own, that of any reading is its end.
+func (e *evaluation) ownRange() (lo, hi float64) {
+	return e.own.Lo, min(e.own.Hi, record.GreatestReading)
+}
+
 func sideOf(above bool) Status {
 	if above {
 		return Above
@@ -259,7 +270,7 @@ func sideOf(above bool) Status {
 func (e *evaluation) findOutside(outside *curve.OutsideError) {
 	params := wording.Params{"mean": e.mean, "scale": string(e.own.Key), "lo": outside.Lo, "hi": outside.Hi}
 	code := "outside-scale-range"
-	if e.own.Leeb || e.own.Key == scale.HV {
+	if e.first != nil && (e.own.Leeb || e.own.Key == scale.HV) {
 		code = "outside-metal-range"
 		params["lo"], params["hi"], params["metal"] = e.group.Lo, e.group.Hi, e.group.Name
 	}

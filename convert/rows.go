@@ -44,11 +44,11 @@ func (e *evaluation) combineReading() *stats.Uncertainty {
 func (e *evaluation) ownRow() Row {
 	r := newRow(e.own)
 	r.Device = e.device.Key
-	r.setRange(e.own, e.own.Lo, e.own.Hi)
+	lo, hi := e.ownRange()
 	if e.first != nil {
-		lo, hi := e.first.Domain()
-		r.setRange(e.own, lo, hi)
+		lo, hi = e.first.Domain()
 	}
+	r.setRange(e.own, lo, hi)
 	switch {
 	case e.summary.N == 0:
 		r.refuse(None, "scale-no-readings", nil)

@@ -3,6 +3,7 @@
 package curve
 
 import (
+	"errors"
 	"fmt"
 	"math"
 	"slices"
@@ -56,8 +57,12 @@ func NewTable(xs, ys []float64) (*Table, error) {
 	if len(xs) != len(ys) || len(xs) < 2 {
 		return nil, fmt.Errorf("a curve needs two points or more, with a value each: it has %d arguments and %d values", len(xs), len(ys))
 	}
+	if span := xs[len(xs)-1] - xs[0] + math.Abs(ys[len(ys)-1]-ys[0]); math.IsInf(span, 0) {
+		return nil, errors.New("a curve needs finite points, and a finite span")
+	}
+	rises := ys[1] > ys[0]
 	for i := 1; i < len(xs); i++ {
-		if !(xs[i] > xs[i-1]) || !((ys[i]-ys[i-1])*(ys[1]-ys[0]) > 0) {
+		if !(xs[i] > xs[i-1]) || !(ys[i] != ys[i-1]) || (ys[i] > ys[i-1]) != rises {
 			return nil, fmt.Errorf("a curve must rise or fall strictly: point %d (%g, %g) does not follow from (%g, %g)",
 				i+1, xs[i], ys[i], xs[i-1], ys[i-1])
 		}
@@ -92,6 +97,9 @@ func (t *Table) Slope(x float64) (float64, error) {
 
 // Inverse implements Curve.
 func (t *Table) Inverse(y float64) (float64, error) {
+	if i := slices.Index(t.ys, y); i >= 0 {
+		return t.xs[i], nil // a search would miss it by the last bit
+	}
 	return inverse(t.spline.Predict, t.xs, y, t.ys[0], t.ys[len(t.ys)-1])
 }
 
@@ -147,7 +155,11 @@ func Narrow(c Curve, lo, hi float64) (Narrowed, error) {
 	from, to := c.Domain()
 	n := Narrowed{Curve: c, lo: max(lo, from), hi: min(hi, to)}
 	if !(n.lo < n.hi) {
-		return n, &OutsideError{Value: lo, Lo: from, Hi: to}
+		asked := hi // which lies below the curve
+		if lo >= to {
+			asked = max(lo, hi)
+		}
+		return n, &OutsideError{Value: asked, Lo: from, Hi: to}
 	}
 	return n, nil
 }

@@ -16,7 +16,10 @@ var ErrNoRoot = errors.New("the function does not cross zero between the two end
 // Method: T. R. Chandrupatla, Advances in Engineering Software 28 (1997) 145:
 // inverse quadratic interpolation where that is safe, bisection elsewhere.
 func Root(f func(float64) float64, lo, hi float64) (float64, error) {
-	const relative = 4e-16
+	const (
+		relative = 4e-16
+		absolute = 1e-300 // beside zero no relative step is small enough
+	)
 	a, b := hi, lo
 	fa, fb := f(a), f(b)
 	switch {
@@ -42,7 +45,7 @@ func Root(f func(float64) float64, lo, hi float64) (float64, error) {
 		if math.Abs(fb) < math.Abs(fa) {
 			best, fbest = b, fb
 		}
-		least := relative * math.Abs(best) / math.Abs(b-a)
+		least := (relative*math.Abs(best) + absolute) / math.Abs(b-a)
 		if fbest == 0 || least > 0.5 || a == b {
 			return best, nil
 		}

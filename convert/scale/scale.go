@@ -107,7 +107,10 @@ func (s Scale) Direct() bool {
 
 // Quote writes a value as it may be quoted, rounded to the scale's step and
 // without its unit. Halfway values go away from zero.
-func (s Scale) Quote(value float64) string { return s.format(math.Round(s.steps(value))) }
+func (s Scale) Quote(value float64) string {
+	n := s.steps(value)
+	return s.format(math.Round(n + math.Copysign(noise(n), n))) // 20.15 is a little less in binary
+}
 
 // QuoteUp is Quote rounded up, for uncertainties and upper bounds.
 func (s Scale) QuoteUp(value float64) string { return s.format(math.Ceil(s.steps(value))) }
@@ -119,14 +122,18 @@ func (s Scale) QuoteDown(value float64) string { return s.format(math.Floor(s.st
 // must not push a value that stands on a step to the next one.
 func (s Scale) steps(value float64) float64 {
 	n := value / s.Step
-	if near := math.Round(n); math.Abs(n-near) < 1e-9*math.Max(1, math.Abs(n)) {
+	if near := math.Round(n); math.Abs(n-near) < noise(n) {
 		return near
 	}
 	return n
 }
 
+// noise is more than arithmetic adds to a number of steps, and less than
+// anyone could read off.
+func noise(steps float64) float64 { return 1e-11 * max(1, math.Abs(steps)) }
+
 func (s Scale) format(steps float64) string {
-	return strconv.FormatFloat(steps*s.Step, 'f', s.Decimals, 64)
+	return strconv.FormatFloat(steps*s.Step+0, 'f', s.Decimals, 64) // + 0: no -0
 }
 
 // Notation writes a quoted number with its scale, and in brackets the scale it

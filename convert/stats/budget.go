@@ -44,7 +44,8 @@ type Uncertainty struct {
 
 // Combine combines independent terms by the law of propagation (JCGM 100,
 // 5.1.2), with effective degrees of freedom by Welch and Satterthwaite (G.4),
-// expanded to the confidence (0 to 1) by Student's factor. The slice is copied.
+// expanded to the confidence (0 to 1) by Student's factor. Degrees of freedom
+// must be above zero. The slice is copied.
 func Combine(terms []Term, confidence float64) Uncertainty {
 	terms = append([]Term{}, terms...)
 	var variance, welch float64
@@ -52,7 +53,9 @@ func Combine(terms []Term, confidence float64) Uncertainty {
 		c := math.Abs(t.Sensitivity) * t.Standard
 		terms[i].Contribution = c
 		variance += c * c
-		welch += c * c * c * c / float64(t.DoF) // an infinite one adds nothing
+		if c > 0 {
+			welch += c * c * c * c / float64(t.DoF) // an infinite one adds nothing
+		}
 	}
 	u := Uncertainty{Standard: math.Sqrt(variance), DoF: Infinite, Terms: terms}
 	if welch > 0 {

@@ -111,15 +111,19 @@ type Outlier struct {
 }
 
 // Grubbs tests the reading farthest from the mean, two-sided at GrubbsLevel.
-// Fewer than three readings, or readings all alike, have no suspect.
-func Grubbs(values []float64) Outlier {
+// Fewer than three readings, or readings all alike, have no suspect. step is
+// what the values are rounded to, 0 if they are not: rounding hides a scatter
+// of its own, without which two equal readings of three would make any third
+// one suspect.
+func Grubbs(values []float64, step float64) Outlier {
 	s := Summarize(values)
 	if s.N < 3 || s.SD == 0 {
 		return Outlier{Index: -1, G: math.NaN(), Critical: GrubbsCritical(s.N, GrubbsLevel)}
 	}
 	o := Outlier{Critical: GrubbsCritical(s.N, GrubbsLevel)}
+	scatter := math.Hypot(s.SD, Rectangular(step/2))
 	for i, v := range values {
-		if g := math.Abs(v-s.Mean) / s.SD; g > o.G {
+		if g := math.Abs(v-s.Mean) / scatter; g > o.G {
 			o.Index, o.G = i, g
 		}
 	}

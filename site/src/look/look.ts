@@ -49,6 +49,9 @@ export const look = css`
     border: 1px solid var(--edge);
     border-radius: var(--round);
   }
+  select {
+    padding-inline: 0.4rem;
+  }
   button {
     min-height: var(--touch);
     min-width: var(--touch);
