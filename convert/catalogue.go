@@ -7,6 +7,7 @@ import (
 	"strikebook/convert/metal"
 	"strikebook/convert/record"
 	"strikebook/convert/scale"
+	"strikebook/convert/verdict"
 )
 
 // Catalogue is what a record can choose from, each with its source.
@@ -17,6 +18,8 @@ type Catalogue struct {
 	Directions    []DirectionChoice `json:"directions"`
 	Groups        []GroupChoice     `json:"groups"`
 	Scales        []ScaleChoice     `json:"scales"`
+	Rules         []verdict.Rule    `json:"rules"`  // of decision, the default first
+	Limits        []LimitChoice     `json:"limits"` // that published codes name
 }
 
 // DeviceChoice is an impact device.
@@ -57,9 +60,19 @@ type ScaleChoice struct {
 	Source   string    `json:"source"`
 }
 
+// LimitChoice is a limit that a published code names.
+type LimitChoice struct {
+	Key    string    `json:"key"`
+	Text   string    `json:"text"` // English
+	Scale  scale.Key `json:"scale"`
+	Min    *float64  `json:"min"` // null: none
+	Max    *float64  `json:"max"` // null: none
+	Source string    `json:"source"`
+}
+
 // NewCatalogue lists what a record can choose from.
 func NewCatalogue() Catalogue {
-	c := Catalogue{Edition: Edition, RecordVersion: record.Version}
+	c := Catalogue{Edition: Edition, RecordVersion: record.Version, Rules: verdict.Rules()}
 	for _, d := range device.All() {
 		c.Devices = append(c.Devices, DeviceChoice{
 			Key: d.Key, Scale: scale.Key(d.Scale), Range: []float64{d.Lo, d.Hi},
@@ -84,6 +97,11 @@ func NewCatalogue() Catalogue {
 	}
 	for _, s := range scale.Converted() {
 		c.Scales = append(c.Scales, scaleChoice(s, scale.Source()))
+	}
+	for _, l := range verdict.All() {
+		c.Limits = append(c.Limits, LimitChoice{
+			Key: l.Key, Text: l.Text, Scale: l.Scale, Min: number(l.Min), Max: number(l.Max), Source: l.Source,
+		})
 	}
 	return c
 }

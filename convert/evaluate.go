@@ -7,6 +7,7 @@ package convert
 import (
 	"errors"
 	"math"
+	"slices"
 	"strconv"
 
 	"strikebook/convert/curve"
@@ -35,11 +36,11 @@ func Evaluate(r record.Record) (Sheet, error) {
 		return Sheet{}, err
 	}
 	e := newEvaluation(r.Normalized())
+	e.prepare()
 	e.summarize()
-	e.correct()
-	e.findLegs()
-	e.place()
+	e.locate()
 	e.convert()
+	e.judge()
 	return e.sheet, nil
 }
 
@@ -71,6 +72,7 @@ func newEvaluation(r record.Record) *evaluation {
 	e.sheet = Sheet{
 		Edition:  Edition,
 		Scale:    r.Scale,
+		Devices:  []DeviceFit{},
 		Readings: Readings{Suspect: []int{}},
 		Scales:   []Row{},
 		Findings: []Finding{},
@@ -87,13 +89,31 @@ func (e *evaluation) find(code, field string, params wording.Params) {
 }
 
 // stopped reports whether a finding forbids converted values.
-func (e *evaluation) stopped() bool {
-	for _, f := range e.sheet.Findings {
-		if f.Level == wording.Stop {
-			return true
-		}
+func (e *evaluation) stopped() bool { return e.stoppedBut(nil) }
+
+// stoppedBut is stopped for other findings than these.
+func (e *evaluation) stoppedBut(codes []string) bool {
+	return slices.ContainsFunc(e.sheet.Findings, func(f Finding) bool {
+		return f.Level == wording.Stop && !slices.Contains(codes, f.Code)
+	})
+}
+
+// prepare does what can be done before the first reading: whether the spot may
+// be tested, what the instrument is worth, and what leads from reading to HV.
+func (e *evaluation) prepare() {
+	e.checkPiece()
+	e.checkBlock()
+	if e.own.Key == "" {
+		e.find("no-device", "device", wording.Params{})
 	}
-	return false
+	e.findLegs()
+}
+
+// locate leads from the readings' mean to the hardness it stands for.
+func (e *evaluation) locate() {
+	e.budgetReadings()
+	e.correct()
+	e.place()
 }
 
 // summarize describes the readings, and judges them as a set.
@@ -123,7 +143,6 @@ func (e *evaluation) summarize() {
 		s.ShownSD = strconv.FormatFloat(*s.SD, 'f', e.own.Decimals+1, 64)
 	}
 	e.judgeReadings(values, positions, percent)
-	e.budgetReadings()
 }
 
 func (e *evaluation) judgeReadings(values []float64, positions []int, percent float64) {
@@ -145,21 +164,26 @@ func (e *evaluation) judgeReadings(values []float64, positions []int, percent fl
 	}
 }
 
-// budgetReadings sets up the uncertainty of the mean as a reading.
+// addTerms adds terms to the uncertainty of the mean as a reading, in its scale.
+func (e *evaluation) addTerms(terms ...stats.Term) {
+	for _, t := range terms {
+		t.Scale, t.Sensitivity = string(e.own.Key), 1
+		e.terms = append(e.terms, t)
+	}
+}
+
+// budgetReadings sets up what the readings leave in doubt about their mean.
 func (e *evaluation) budgetReadings() {
 	if e.summary.N == 0 {
 		return
 	}
-	e.terms = []stats.Term{
-		e.repeatability(),
-		{
-			Name: "resolution", Standard: stats.Rectangular(e.own.DisplayStep / 2), DoF: stats.Infinite,
-			Source: "Half the step of a usual display, rectangular (common practice, no source)",
-		},
-	}
-	for i := range e.terms {
-		e.terms[i].Scale, e.terms[i].Sensitivity = string(e.own.Key), 1
-	}
+	instrument := e.terms
+	e.terms = nil
+	e.addTerms(e.repeatability(), stats.Term{
+		Name: "resolution", Standard: stats.Rectangular(e.own.DisplayStep / 2), DoF: stats.Infinite, Distribution: stats.Uniform,
+		Source: "Half the step of a usual display, rectangular (common practice, no source)",
+	})
+	e.terms = append(e.terms, instrument...)
 }
 
 // repeatability is the uncertainty of the mean from the scatter of the
@@ -168,10 +192,7 @@ func (e *evaluation) budgetReadings() {
 // theirs is larger.
 func (e *evaluation) repeatability() stats.Term {
 	n := e.summary.N
-	measured := stats.Term{
-		Name: "repeatability", Standard: e.summary.StandardError, DoF: stats.DoF(n - 1),
-		Source: "Standard deviation of the mean of the readings, JCGM 100, 4.2",
-	}
+	measured := stats.RepeatabilityTerm(n, e.summary.SD)
 	if n >= leastReadings {
 		return measured
 	}
@@ -180,16 +201,13 @@ func (e *evaluation) repeatability() stats.Term {
 		return measured
 	}
 	return stats.Term{
-		Name: "repeatability", Standard: assumed, DoF: stats.Infinite,
+		Name: stats.Repeatability, Standard: assumed, DoF: stats.Infinite, Distribution: stats.Uniform,
 		Source: "Assumed: readings anywhere within the spread of 5 % that ISO 16859-1 allows, from memory",
 	}
 }
 
 // correct brings the mean to what it would be vertically down.
 func (e *evaluation) correct() {
-	if e.own.Key == "" {
-		e.find("no-device", "device", wording.Params{})
-	}
 	if e.summary.N == 0 {
 		return
 	}
@@ -209,8 +227,38 @@ func (e *evaluation) correct() {
 		e.sheet.Corrected.Direction = add
 		mean += add
 	}
+	e.budgetDirection()
+	mean += e.sheet.Corrected.Block
 	e.mean = mean
 	e.sheet.Corrected.Mean = number(mean)
+}
+
+const (
+	// What a tabulated direction correction may be wrong by, to either side: half
+	// its rounding step, and a share for a probe held some degrees off (estimate).
+	correctionStep  = 1.0
+	correctionShare = 0.2
+	// What an instrument that compensates the direction itself may be wrong by, to
+	// either side, HL (estimate).
+	compensationError = 2.0
+)
+
+// budgetDirection sets up what the correction for the direction leaves in doubt.
+func (e *evaluation) budgetDirection() {
+	half, source := 0.0, ""
+	switch {
+	case !e.own.Leeb:
+	case e.record.Direction == device.Compensated:
+		half, source = compensationError, "Compensation by the instrument, rectangular: engineering estimate"
+	case e.sheet.Corrected.Direction != 0:
+		half = correctionStep/2 + correctionShare*math.Abs(e.sheet.Corrected.Direction)
+		source = "Half a step and a fifth of the tabulated correction, rectangular: engineering estimate"
+	}
+	if half > 0 {
+		e.addTerms(stats.Term{
+			Name: "direction", Standard: stats.Rectangular(half), DoF: stats.Infinite, Distribution: stats.Uniform, Source: source,
+		})
+	}
 }
 
 // findLegs finds what leads from the readings to HV on the metal, and from HV

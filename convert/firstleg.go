@@ -54,7 +54,7 @@ func (e *evaluation) byModel() *firstLeg {
 		terms: func(reading, hv float64) []stats.Term {
 			return []stats.Term{{
 				Name: "model", Standard: leg.StandardUncertainty(reading, hv), Scale: string(e.own.Key),
-				DoF: stats.Infinite, Sensitivity: 1,
+				DoF: stats.Infinite, Distribution: stats.Normal, Sensitivity: 1,
 				Source: "Rebound model on " + e.group.Name + ", engineering estimate",
 			}}
 		},
@@ -107,6 +107,6 @@ func secondLegTerm(leg scale.Leg, hv float64) stats.Term {
 	}
 	return stats.Term{
 		Name: "second leg", Standard: v.Standard, Scale: string(leg.Scale.Key),
-		DoF: stats.Infinite, Sensitivity: 1, Source: scale.LegSource,
+		DoF: stats.Infinite, Distribution: stats.Normal, Sensitivity: 1, Source: scale.LegSource,
 	}
 }

@@ -1,6 +1,7 @@
 package convert
 
 import (
+	"errors"
 	"math"
 	"slices"
 
@@ -122,26 +123,37 @@ func (e *evaluation) reach(leg scale.Leg) (lo, hi float64, ok bool) {
 
 // fill gives a row its value: over the first leg to HV, over the second to the scale.
 func (e *evaluation) fill(r *Row, leg scale.Leg) {
-	v, err := leg.At(e.hv)
-	if outside, ok := err.(*curve.OutsideError); ok {
-		e.refuseSide(r, sideOf(outside.Above()))
+	value, terms, err := e.over(leg)
+	if err != nil {
+		e.refuseSide(r, sideOf(err.Above()))
 		return
+	}
+	r.Path = e.first.steps(e.hv)
+	if leg.Scale.Key != scale.HV {
+		r.Path = append(r.Path, leg.Steps(e.hv)...)
+	}
+	r.accept(leg.Scale, e.own.Key, value, stats.Combine(terms, e.record.Confidence))
+}
+
+// over leads from the mean, which has been placed, over a leg: to its value and
+// all that makes it uncertain.
+func (e *evaluation) over(leg scale.Leg) (value float64, terms []stats.Term, outside *curve.OutsideError) {
+	v, err := leg.At(e.hv)
+	if errors.As(err, &outside) {
+		return math.NaN(), nil, outside
 	}
 	slope, err := e.first.Slope(e.mean)
 	if err != nil {
 		panic(err) // place has found the mean inside the first leg
 	}
-	terms := slices.Clone(e.terms)
-	terms = append(terms, e.first.terms(e.mean, e.hv)...)
+	terms = append(slices.Clone(e.terms), e.first.terms(e.mean, e.hv)...)
 	for i := range terms {
 		terms[i].Sensitivity *= slope * v.Slope
 	}
-	r.Path = e.first.steps(e.hv)
 	if leg.Scale.Key != scale.HV {
 		terms = append(terms, secondLegTerm(leg, e.hv))
-		r.Path = append(r.Path, leg.Steps(e.hv)...)
 	}
-	r.accept(leg.Scale, e.own.Key, v.Value, stats.Combine(terms, e.record.Confidence))
+	return v.Value, terms, nil
 }
 
 func newRow(s scale.Scale) Row {

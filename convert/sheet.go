@@ -3,6 +3,7 @@ package convert
 import (
 	"math"
 
+	"strikebook/convert/device"
 	"strikebook/convert/scale"
 	"strikebook/convert/stats"
 	"strikebook/convert/wording"
@@ -14,11 +15,54 @@ import (
 type Sheet struct {
 	Edition     string             `json:"edition"`     // of the data: the same record and edition give the same sheet
 	Scale       scale.Key          `json:"scale"`       // what the readings are in; "" while it is not chosen
+	Piece       TestPiece          `json:"piece"`       // the test piece
+	Devices     []DeviceFit        `json:"devices"`     // every device there is against the test piece
+	Block       BlockCheck         `json:"block"`       // the check on a test block
 	Readings    Readings           `json:"readings"`    // the readings that count, as they were taken
 	Corrected   Corrected          `json:"corrected"`   // their mean, corrected
 	Uncertainty *stats.Uncertainty `json:"uncertainty"` // of the mean as a measure of the metal's hardness, in Scale: the readings and the first leg; null without readings
 	Scales      []Row              `json:"scales"`      // the reading's own scale first, then every other
+	Verdict     Verdict            `json:"verdict"`     // against the limit
 	Findings    []Finding          `json:"findings"`    // in the order of the job
+}
+
+// BlockCheck is what a check on a test block says of the instrument.
+type BlockCheck struct {
+	Status    BlockStatus `json:"status"`
+	N         int         `json:"n"`         // readings on the block
+	Mean      *float64    `json:"mean"`      // in the sheet's scale
+	SD        *float64    `json:"sd"`        // their sample standard deviation
+	Error     *float64    `json:"error"`     // mean less certified value; null unless the check is complete
+	Tolerance *float64    `json:"tolerance"` // what it may be; null where nothing says
+}
+
+// BlockStatus is what a check on a block comes to.
+type BlockStatus string
+
+// The statuses of a block check.
+const (
+	BlockPassed     BlockStatus = "passed"
+	BlockFailed     BlockStatus = "failed"
+	BlockUsed       BlockStatus = "used"       // complete, but there is no tolerance to hold it against
+	BlockIncomplete BlockStatus = "incomplete" // something is missing, and the permissible error stands in
+	BlockNone       BlockStatus = "none"       // there was none, and the permissible error stands in
+)
+
+// TestPiece is what is known of the test piece's size, null where it is not.
+type TestPiece struct {
+	MassKg       *float64 `json:"massKg"`       // as stated, else computed from shape and density
+	MassComputed bool     `json:"massComputed"` // whether it was computed
+	ThicknessMm  *float64 `json:"thicknessMm"`  // under the spot: as stated, a pipe's wall if that is less, a bar's diameter if nothing is stated
+	RadiusMm     *float64 `json:"radiusMm"`     // of a curved surface: as stated, else half the outer diameter of a pipe or bar
+}
+
+// DeviceFit says how an impact device and the test piece go together. What is
+// not known of the piece does not count against the device.
+type DeviceFit struct {
+	Device     string                 `json:"device"`     // its key
+	Suits      bool                   `json:"suits"`      // whether the piece falls short in nothing
+	Shortfalls []device.ShortfallKind `json:"shortfalls"` // what it falls short in, if the device is used; the codes of the findings there would be
+	Curve      bool                   `json:"curve"`      // whether the device has a built-in conversion, which is then for every metal
 }
 
 // Readings describes the readings that count.

@@ -21,10 +21,12 @@ type door struct {
 
 // doors are the functions of the global object. "" stands for no argument.
 var doors = map[string]door{
-	"evaluate":   {"the JSON of a record, as text", evaluate},
-	"encodeLink": {"the JSON of a record, as text", encodeLink},
-	"decodeLink": {"the fragment of a link, as text", decodeLink},
-	"catalogue":  {"", catalogue},
+	"evaluate":     {"the JSON of a record, as text", evaluate},
+	"goNoGo":       {"the JSON of a record with n and sd, as text", goNoGo},
+	"moreReadings": {"the JSON of a record with what is wanted, as text", moreReadings},
+	"encodeLink":   {"the JSON of a record, as text", encodeLink},
+	"decodeLink":   {"the fragment of a link, as text", decodeLink},
+	"catalogue":    {"", catalogue},
 }
 
 func evaluate(text string) (string, error) {
@@ -37,6 +39,30 @@ func evaluate(text string) (string, error) {
 		return "", err
 	}
 	return marshal(sheet)
+}
+
+func goNoGo(text string) (string, error) {
+	var q convert.GoNoGoRequest
+	if err := record.DecodeAround([]byte(text), &q, &q.Record); err != nil {
+		return "", err
+	}
+	answer, err := convert.FindGoNoGo(q)
+	if err != nil {
+		return "", err
+	}
+	return marshal(answer)
+}
+
+func moreReadings(text string) (string, error) {
+	var q convert.MoreReadingsRequest
+	if err := record.DecodeAround([]byte(text), &q, &q.Record); err != nil {
+		return "", err
+	}
+	answer, err := convert.FindMoreReadings(q)
+	if err != nil {
+		return "", err
+	}
+	return marshal(answer)
 }
 
 func encodeLink(text string) (string, error) {

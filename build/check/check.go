@@ -129,7 +129,7 @@ func (c checker) wasmTests(ctx context.Context) error {
 	runner := filepath.Join(goroot, "lib", "wasm", "go_js_wasm_exec")
 	_, err = command.Command{
 		Dir: c.root, Env: page.WasmEnv,
-		Args: []string{"go", "test", "-exec", runner, "./convert/..."},
+		Args: []string{"go", "test", "-exec", runner, "./convert/...", "./wasm"},
 	}.Run(ctx)
 	return err
 }

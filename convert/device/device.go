@@ -1,5 +1,5 @@
-// Package device holds the impact devices and the corrections for the
-// direction of impact.
+// Package device holds the impact devices, the corrections for the direction
+// of impact, and what each device requires of the test piece.
 package device
 
 import (
@@ -22,6 +22,23 @@ type Device struct {
 	BallMaterial   string  // a key of the rebound model's ball materials
 	Lo, Hi         float64 // application range, in the device's scale
 	BuiltInCurve   bool    // whether the rebound model serves it
+
+	Requirements Requirements // of the test piece
+}
+
+// Requirements is what a device requires of the test piece. 0 where the
+// standards name nothing that is sure: then anything will do.
+type Requirements struct {
+	MassFreeKg           float64 // least mass of a piece that lies free,
+	MassSupportedKg      float64 // on a solid support,
+	MassCoupledKg        float64 // coupled to a solid plate
+	ThicknessUncoupledMm float64 // least thickness, free or supported,
+	ThicknessCoupledMm   float64 // coupled to a solid plate
+	CaseMm               float64 // least depth of a hardened case
+	RaUm                 float64 // greatest roughness Ra
+	RadiusMm             float64 // least radius of a curved surface, without a support ring
+	SpacingMm            float64 // least distance from one impression to the next
+	EdgeMm               float64 // least distance from an impression to an edge
 }
 
 //go:embed devices.csv
@@ -44,9 +61,29 @@ func readDevices(t table.Table) []Device {
 			Lo:             row.Number("hl_min"),
 			Hi:             row.Number("hl_max"),
 			BuiltInCurve:   row.Text("curve") == "yes",
+			Requirements: Requirements{
+				MassFreeKg:           given(row.Number("mass_free_kg")),
+				MassSupportedKg:      given(row.Number("mass_supported_kg")),
+				MassCoupledKg:        given(row.Number("mass_coupled_kg")),
+				ThicknessUncoupledMm: given(row.Number("thickness_uncoupled_mm")),
+				ThicknessCoupledMm:   given(row.Number("thickness_coupled_mm")),
+				CaseMm:               given(row.Number("case_depth_mm")),
+				RaUm:                 given(row.Number("max_ra_um")),
+				RadiusMm:             given(row.Number("min_radius_mm")),
+				SpacingMm:            given(row.Number("min_spacing_mm")),
+				EdgeMm:               given(row.Number("min_edge_mm")),
+			},
 		})
 	}
 	return all
+}
+
+// given is a requirement as the file gives it, 0 where it gives none.
+func given(cell float64) float64 {
+	if math.IsNaN(cell) {
+		return 0
+	}
+	return cell
 }
 
 // Source names where the devices' data come from.

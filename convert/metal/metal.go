@@ -13,6 +13,8 @@ type Group struct {
 	Key  string // "low-alloy-steel", ...
 	Name string // English
 
+	Density float64 // kg/m3
+
 	E           float64 // Young's modulus, Pa
 	Nu          float64 // Poisson's ratio
 	RateFactor  float64 // how many times the static strength the impact meets
@@ -37,6 +39,7 @@ func readGroups(t table.Table) []Group {
 		g := Group{
 			Key:          row.Text("key"),
 			Name:         row.Text("name"),
+			Density:      row.Number("density_kg_m3"),
 			E:            row.Number("E_GPa") * 1e9,
 			Nu:           row.Number("nu"),
 			RateFactor:   row.Number("rate_factor"),

@@ -22,6 +22,7 @@ func TestGroupsAreSane(t *testing.T) {
 				got           float64
 				least, utmost float64
 			}{
+				{"density in kg/m3", g.Density, 2500, 9000},
 				{"E in Pa", g.E, 60e9, 220e9},
 				{"Poisson's ratio", g.Nu, 0.25, 0.35},
 				{"rate factor", g.RateFactor, 1, 1.5},

@@ -55,26 +55,45 @@ func parseNumber(text string) Number {
 	return Number{Value: math.NaN(), Text: text}
 }
 
-// Encode writes a record as JSON.
+// Encode writes a record as JSON, its version first. A record that would be
+// too large to be read again is refused.
 func Encode(r Record) ([]byte, error) {
 	r.V = Version
-	return strict.Marshal(r)
+	text, err := strict.Marshal(r)
+	if err == nil && len(text) > MaxBytes {
+		err = tooLarge
+	}
+	return text, err
 }
+
+var tooLarge = wording.NewError("record-too-large", "", wording.Params{"limit": float64(MaxBytes)})
 
 // Decode reads a record from JSON and validates it. An error is a
 // *wording.Error that names the field and the remedy.
 func Decode(data []byte) (Record, error) {
-	if len(data) > MaxBytes {
-		return Record{}, wording.NewError("record-too-large", "", wording.Params{"limit": float64(MaxBytes)})
-	}
 	var r Record
-	if err := strict.Unmarshal(data, &r); err != nil {
-		return Record{}, refusal(data, err)
+	if err := DecodeAround(data, &r, &r); err != nil {
+		return Record{}, err
 	}
-	if r.V != Version {
-		return Record{}, versionError(strconv.Itoa(r.V))
+	return r, nil
+}
+
+// DecodeAround reads from JSON a request, a struct that a record is embedded
+// in, and validates that record. The errors are those of Decode.
+func DecodeAround(data []byte, request any, r *Record) error {
+	if len(data) > MaxBytes {
+		return tooLarge
 	}
-	return r, r.Validate()
+	if err := strict.Unmarshal(data, request); err != nil {
+		return refusal(data, err)
+	}
+	switch r.V {
+	case Version:
+		return r.Validate()
+	case 0:
+		return versionError("0 (none is stated)")
+	}
+	return versionError(strconv.Itoa(r.V))
 }
 
 func versionError(version string) error {
@@ -110,21 +129,53 @@ func refusal(data []byte, err error) error {
 	return wording.NewError("wrong-type", e.Path, shown)
 }
 
-// statedVersion looks for the version of a record that cannot be read.
+// statedVersion looks for the version of a record that cannot be read: the
+// value of "v" in the outermost object, if that is no object or list.
 func statedVersion(data []byte) (version string, ok bool) {
-	_, rest, ok := bytes.Cut(data, []byte(`"v"`))
-	if !ok {
-		return "", false
-	}
-	rest, ok = bytes.CutPrefix(bytes.TrimSpace(rest), []byte(":"))
-	if !ok {
-		return "", false
-	}
-	rest = bytes.TrimSpace(rest)
-	if end := bytes.IndexAny(rest, ",} \t\r\n"); end > 0 {
-		return shorten(string(rest[:end])), true
+	depth := 0
+	name := false // whether a text would be a field's name
+	for i := 0; i < len(data); i++ {
+		switch c := data[i]; c {
+		case '{', '[':
+			depth++
+			name = c == '{'
+		case '}', ']':
+			depth--
+		case ',':
+			name = true
+		case '"':
+			text := data[i : i+textLength(data[i:])]
+			rest := bytes.TrimSpace(data[i+len(text):])
+			if name && depth == 1 && string(text) == `"v"` && bytes.HasPrefix(rest, []byte(":")) {
+				return scalar(bytes.TrimSpace(rest[1:]))
+			}
+			i += len(text) - 1
+			name = false
+		}
 	}
 	return "", false
+}
+
+// textLength is the length of the JSON text that data begins with.
+func textLength(data []byte) int {
+	for i := 1; i < len(data); i++ {
+		switch data[i] {
+		case '\\':
+			i++
+		case '"':
+			return i + 1
+		}
+	}
+	return len(data)
+}
+
+// scalar returns the number, text or word that data begins with, as it stands.
+func scalar(data []byte) (string, bool) {
+	end := bytes.IndexAny(data, ",} \t\r\n")
+	if end <= 0 || data[0] == '{' || data[0] == '[' {
+		return "", false
+	}
+	return shorten(string(data[:end])), true
 }
 
 // shorten keeps a sentence readable whatever it has to quote.

@@ -10,6 +10,7 @@ import (
 	"strings"
 	"testing"
 
+	"strikebook/convert/device"
 	"strikebook/convert/record"
 	"strikebook/convert/record/recordtest"
 	"strikebook/convert/wording"
@@ -84,8 +85,16 @@ func TestDecodeRefuses(t *testing.T) {
 		{"a line end in a text", "{\"v\":1,\"notes\":\"a\nb\"}", "record-not-json", "notes"},
 		{"a bad escape", `{"v":1,"notes":"\x41"}`, "record-not-json", "notes"},
 
+		{"nothing", ``, "record-not-json", ""},
+		{"a bare word", `hello`, "record-not-json", ""},
+		{"a bare word for label", `{"v":1,"label":hello}`, "record-not-json", "label"},
+		{"a value missing", `{"v":1,"label":}`, "record-not-json", "label"},
+		{"a version inside", `{"v":1,"piece":{"v":3}}`, "unknown-field", "piece.v"},
+		{"a version as a value", `{"id":"v","new":1,"v":2}`, "record-version", "v"},
+		{"a number with a comma", `{"v":1,"piece":{"mass_kg":"12,5"}}`, "wrong-type", "piece.mass_kg"},
+
 		{"a list", `[{"v":1,"readings":[]}]`, "wrong-type", ""},
-		{"a text", `"{}"`, "wrong-type", ""},
+		{"a text", `"a text"`, "wrong-type", ""},
 		{"a number", `1`, "wrong-type", ""},
 		{"number for label", `{"v":1,"label":4}`, "wrong-type", "label"},
 		{"list for zone", `{"v":1,"zone":["haz"]}`, "wrong-type", "zone"},
@@ -167,7 +176,7 @@ func TestDecodeRefuses(t *testing.T) {
 func TestDecodeSaysWhy(t *testing.T) {
 	for data, want := range map[string]string{
 		`{"v":1,"readings":[{"value":612}`:          "The record is not valid JSON: at readings, a comma or ] is expected, but there is nothing. Open a record that this program wrote.",
-		`{"v":1 "readings":[]}`:                     `The record is not valid JSON: at record, a comma or } is expected, but there is "readings":[. Open a record that this program wrote.`,
+		`{"v":1 "readings":[]}`:                     `The record is not valid JSON: at record, a comma or } is expected, but there is "readings". Open a record that this program wrote.`,
 		`{"v":2,"spots":[]}`:                        "The record is of version 2, and this edition reads version 1. Open it with the edition that wrote it, or a newer one.",
 		`{"v":"1"}`:                                 `The record is of version "1", and this edition reads version 1. Open it with the edition that wrote it, or a newer one.`,
 		`{"v":1,"want":"{got}"}`:                    "The field want is unknown in a record of version 1. Remove it, or open the record with a newer edition.",
@@ -293,7 +302,7 @@ func TestNumberThatJSONCannotHold(t *testing.T) {
 			t.Errorf("%v: %s (%v), want %s", c.n, got, err, c.want)
 		}
 	}
-	if text, err := record.Encode(record.Record{Piece: &record.Piece{MassKg: new(math.NaN())}}); err == nil {
+	if text, err := record.Encode(record.Record{Piece: &device.Piece{MassKg: new(math.NaN())}}); err == nil {
 		t.Errorf("a mass that is no number: %s", text)
 	}
 }

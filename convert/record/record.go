@@ -8,6 +8,7 @@ import (
 
 	"strikebook/convert/device"
 	"strikebook/convert/scale"
+	"strikebook/convert/verdict"
 )
 
 // Version is the version of records that this edition reads and writes.
@@ -31,11 +32,15 @@ type Record struct {
 	Scale     scale.Key        `json:"scale,omitempty"`     // what the readings are in; the device's unless told
 	Group     string           `json:"group,omitempty"`     // key of the metal group; "" while it is not chosen
 
-	Readings []Reading `json:"readings"`        // in the order they were taken, struck ones too
-	Piece    *Piece    `json:"piece,omitempty"` // the test piece
-	Block    *Block    `json:"block,omitempty"` // the check on a test block
-	Limit    *Limit    `json:"limit,omitempty"` // what the spot has to meet
-	Curve    *Curve    `json:"curve,omitempty"` // must be null, see Curve
+	Readings []Reading      `json:"readings"`        // in the order they were taken, struck ones too
+	Piece    *device.Piece  `json:"piece,omitempty"` // the test piece
+	Block    *Block         `json:"block,omitempty"` // the check on a test block
+	Limit    *verdict.Limit `json:"limit,omitempty"` // what the spot has to meet
+	Curve    *Curve         `json:"curve,omitempty"` // must be null, see Curve
+
+	// PermissibleError is how far the instrument may read wrong to either side, in
+	// the record's scale, where no block check says how far it does; 12 HL unless told.
+	PermissibleError *float64 `json:"permissible_error,omitempty"`
 
 	Confidence float64 `json:"confidence,omitempty"` // of the expanded uncertainty, 0.5 to 0.999; 0.95 unless told
 }
@@ -79,72 +84,24 @@ func (n Number) Valid() bool {
 	return n.Value > 0 && n.Value <= GreatestReading // false for NaN
 }
 
-// Piece is the test piece.
-type Piece struct {
-	MassKg       *float64 `json:"mass_kg,omitempty"`
-	ThicknessMm  *float64 `json:"thickness_mm,omitempty"`
-	RadiusMm     *float64 `json:"radius_mm,omitempty"` // of a curved surface, at the spot
-	RaUm         *float64 `json:"ra_um,omitempty"`     // roughness Ra
-	TemperatureC *float64 `json:"temperature_c,omitempty"`
-	Support      Support  `json:"support,omitempty"`
-	CaseMm       *float64 `json:"case_mm,omitempty"` // depth of a hardened case
-	Shape        *Shape   `json:"shape,omitempty"`
-}
-
-// Support is how the test piece lies.
-type Support string
-
-// The supports.
-const (
-	Free      Support = "free"
-	Supported Support = "supported" // on a solid support
-	Coupled   Support = "coupled"   // coupled to a solid plate
-)
-
-// Shape is the test piece's shape and size.
-type Shape struct {
-	Kind            ShapeKind `json:"kind"`
-	LengthMm        *float64  `json:"length_mm,omitempty"`
-	WidthMm         *float64  `json:"width_mm,omitempty"`
-	OuterDiameterMm *float64  `json:"outer_diameter_mm,omitempty"`
-	WallMm          *float64  `json:"wall_mm,omitempty"`
-}
-
-// ShapeKind is the kind of a shape.
-type ShapeKind string
-
-// The kinds of shapes.
-const (
-	Plate   ShapeKind = "plate"
-	Pipe    ShapeKind = "pipe"
-	Bar     ShapeKind = "bar"
-	NoShape ShapeKind = "none"
-)
-
 // Block is a check on a hardness test block.
 type Block struct {
 	Certified *float64 `json:"certified,omitempty"`  // in the record's scale
-	ExpandedU *float64 `json:"expanded_u,omitempty"` // of the certified value
-	Readings  []Number `json:"readings,omitempty"`
-	Tolerance *float64 `json:"tolerance,omitempty"`
+	ExpandedU *float64 `json:"expanded_u,omitempty"` // of the certified value, with a coverage factor of 2
+	Readings  []Number `json:"readings,omitempty"`   // on the block, in the record's scale
+	Tolerance *float64 `json:"tolerance,omitempty"`  // of their mean, to either side of the certified value; 6 HL unless told
+	Taken     string   `json:"taken,omitempty"`      // when, RFC 3339
+	Use       BlockUse `json:"use,omitempty"`        // what the offset is used for; uncertainty unless told
 }
 
-// Limit is what the spot has to meet.
-type Limit struct {
-	Scale scale.Key `json:"scale"`
-	Min   *float64  `json:"min,omitempty"`
-	Max   *float64  `json:"max,omitempty"`
-	Rule  Rule      `json:"rule,omitempty"`
-}
+// BlockUse says what the offset that a block check finds is used for. It is
+// never both.
+type BlockUse string
 
-// Rule is a decision rule.
-type Rule string
-
-// The decision rules.
+// The uses of an offset.
 const (
-	Guarded    Rule = "guarded"      // proven only outside the expanded uncertainty, ISO 14253-1
-	Simple     Rule = "simple"       // the value alone decides
-	OneSided95 Rule = "one-sided-95" // proven at 95 % on the side of the limit
+	AsUncertainty BlockUse = "uncertainty" // it widens the uncertainty
+	AsCorrection  BlockUse = "correction"  // the mean is corrected for it
 )
 
 // Curve stands where a record would carry a curve of its own. This edition

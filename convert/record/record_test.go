@@ -15,6 +15,7 @@ import (
 	"strikebook/convert/record"
 	"strikebook/convert/record/recordtest"
 	"strikebook/convert/scale"
+	"strikebook/convert/verdict"
 )
 
 func TestConfidence(t *testing.T) {
@@ -48,17 +49,17 @@ func TestChoices(t *testing.T) {
 	for _, zone := range []record.Zone{record.Base, record.HAZ, record.Weld, record.Other} {
 		taken(t, record.Record{Zone: zone})
 	}
-	for _, support := range []record.Support{record.Free, record.Supported, record.Coupled} {
-		taken(t, record.Record{Piece: &record.Piece{Support: support}})
+	for _, support := range []device.Support{device.Free, device.Supported, device.Coupled} {
+		taken(t, record.Record{Piece: &device.Piece{Support: support}})
 	}
-	for _, kind := range []record.ShapeKind{record.Plate, record.Pipe, record.Bar, record.NoShape} {
-		taken(t, record.Record{Piece: &record.Piece{Shape: &record.Shape{Kind: kind}}})
+	for _, kind := range []device.ShapeKind{device.Plate, device.Pipe, device.Bar, device.NoShape} {
+		taken(t, record.Record{Piece: &device.Piece{Shape: &device.Shape{Kind: kind}}})
 	}
-	for _, rule := range []record.Rule{record.Guarded, record.Simple, record.OneSided95} {
-		taken(t, record.Record{Limit: &record.Limit{Rule: rule}})
+	for _, rule := range []verdict.Rule{verdict.Guarded, verdict.Simple, verdict.OneSided95} {
+		taken(t, record.Record{Limit: &verdict.Limit{Rule: rule}})
 	}
 	for _, key := range everyScale() {
-		taken(t, record.Record{Limit: &record.Limit{Scale: key}})
+		taken(t, record.Record{Limit: &verdict.Limit{Scale: key}})
 	}
 }
 

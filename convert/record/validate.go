@@ -10,6 +10,7 @@ import (
 	"strikebook/convert/device"
 	"strikebook/convert/metal"
 	"strikebook/convert/scale"
+	"strikebook/convert/verdict"
 	"strikebook/convert/wording"
 )
 
@@ -27,7 +28,7 @@ var curveNotServed = wording.NewError("curve-not-served", "curve", nil)
 // such field, or nil. What is merely wrong with the measurement is for the
 // findings of the evaluation, not for here.
 func (r Record) Validate() error {
-	for _, check := range []func() error{r.checkChoices, r.checkScale, r.checkTexts, r.checkReadings, r.checkTime, r.checkConfidence} {
+	for _, check := range []func() error{r.checkChoices, r.checkScale, r.checkTexts, r.checkReadings, r.checkTimes, r.checkConfidence} {
 		if err := check(); err != nil {
 			return err
 		}
@@ -55,17 +56,22 @@ func (r Record) checkChoices() error {
 		return err
 	}
 	if p := r.Piece; p != nil {
-		if err := oneOf("piece.support", p.Support, Free, Supported, Coupled); err != nil {
+		if err := oneOf("piece.support", p.Support, device.Free, device.Supported, device.Coupled); err != nil {
 			return err
 		}
 		if p.Shape != nil {
-			if err := oneOf("piece.shape.kind", p.Shape.Kind, Plate, Pipe, Bar, NoShape); err != nil {
+			if err := oneOf("piece.shape.kind", p.Shape.Kind, device.Plate, device.Pipe, device.Bar, device.NoShape); err != nil {
 				return err
 			}
 		}
 	}
+	if b := r.Block; b != nil {
+		if err := oneOf("block.use", b.Use, AsUncertainty, AsCorrection); err != nil {
+			return err
+		}
+	}
 	if l := r.Limit; l != nil {
-		if err := oneOf("limit.rule", l.Rule, Guarded, Simple, OneSided95); err != nil {
+		if err := oneOf("limit.rule", l.Rule, verdict.Rules()...); err != nil {
 			return err
 		}
 		return oneOf("limit.scale", l.Scale, limitable()...)
@@ -128,12 +134,15 @@ func (r Record) checkScale() error {
 
 func (r Record) checkTexts() error {
 	texts := []struct{ path, text string }{
-		{"id", r.ID}, {"label", r.Label}, {"job", r.Job}, {"by", r.By}, {"notes", r.Notes}, {"serial", r.Serial},
+		{"id", r.ID}, {"label", r.Label}, {"job", r.Job}, {"by", r.By}, {"notes", r.Notes}, {"serial", r.Serial}, {"taken", r.Taken},
 	}
 	for i, reading := range r.Readings {
 		texts = append(texts,
 			struct{ path, text string }{fmt.Sprintf("readings[%d].struck", i), reading.Struck},
 			struct{ path, text string }{fmt.Sprintf("readings[%d].value", i), reading.Value.Text})
+	}
+	for i, n := range r.blockReadings() {
+		texts = append(texts, struct{ path, text string }{fmt.Sprintf("block.readings[%d]", i), n.Text})
 	}
 	for _, t := range texts {
 		if n := utf8.RuneCountInString(t.text); n > maxText {
@@ -144,20 +153,47 @@ func (r Record) checkTexts() error {
 }
 
 func (r Record) checkReadings() error {
-	if n := len(r.Readings); n > MaxReadings {
-		return wording.NewError("too-many-readings", "readings", wording.Params{"n": n, "limit": MaxReadings})
+	for _, list := range []struct {
+		path string
+		n    int
+	}{{"readings", len(r.Readings)}, {"block.readings", len(r.blockReadings())}} {
+		if list.n > MaxReadings {
+			return wording.NewError("too-many-readings", list.path, wording.Params{"path": list.path, "n": list.n, "limit": MaxReadings})
+		}
 	}
 	return nil
 }
 
-func (r Record) checkTime() error {
-	if r.Taken == "" {
+func (r Record) blockReadings() []Number {
+	if r.Block == nil {
 		return nil
 	}
-	if _, ok := parseTime(r.Taken); !ok {
-		return wording.NewError("not-a-time", "taken", wording.Params{"path": "taken", "got": shorten(r.Taken)})
+	return r.Block.Readings
+}
+
+func (r Record) checkTimes() error {
+	times := []struct{ path, text string }{{"taken", r.Taken}}
+	if r.Block != nil {
+		times = append(times, struct{ path, text string }{"block.taken", r.Block.Taken})
+	}
+	for _, t := range times {
+		if _, ok := parseTime(t.text); !ok && t.text != "" {
+			return wording.NewError("not-a-time", t.path, wording.Params{"path": t.path, "got": shorten(t.text)})
+		}
 	}
 	return nil
+}
+
+// SinceBlock returns how long after the check on the block the readings were
+// taken; less than nothing if before. ok is false where either time is not
+// written down.
+func (r Record) SinceBlock() (d time.Duration, ok bool) {
+	if r.Block == nil {
+		return 0, false
+	}
+	checked, ok1 := parseTime(r.Block.Taken)
+	taken, ok2 := parseTime(r.Taken)
+	return taken.Sub(checked), ok1 && ok2
 }
 
 func (r Record) checkConfidence() error {
@@ -166,7 +202,7 @@ func (r Record) checkConfidence() error {
 		return nil
 	}
 	return wording.NewError("out-of-bounds", "confidence", wording.Params{
-		"path": "confidence", "lo": LeastConfidence, "hi": GreatestConfidence, "got": c})
+		"path": "confidence", "lo": LeastConfidence, "hi": GreatestConfidence, "got": Num(c).String()})
 }
 
 // parseTime reads a time of RFC 3339, such as 2026-12-01T09:30:00Z or
@@ -192,7 +228,14 @@ func parseTime(text string) (time.Time, bool) {
 			parts[part] = parts[part]*10 + int(c-'0')
 		}
 	}
-	zone, ok := parseZone(strings.TrimLeft(text[len(layout):], ".0123456789"))
+	rest := text[len(layout):]
+	if fraction, ok := strings.CutPrefix(rest, "."); ok {
+		rest = strings.TrimLeft(fraction, "0123456789")
+		if rest == fraction {
+			return time.Time{}, false
+		}
+	}
+	zone, ok := parseZone(rest)
 	t := time.Date(parts[0], time.Month(parts[1]), parts[2], parts[3], parts[4], parts[5], 0, time.UTC)
 	// A date that does not exist, such as 31 February, comes back as another.
 	exists := t.Month() == time.Month(parts[1]) && t.Day() == parts[2] && t.Hour() == parts[3] && t.Minute() == parts[4]

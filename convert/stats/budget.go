@@ -24,28 +24,53 @@ func (d DoF) MarshalJSON() ([]byte, error) {
 
 // Term is one contribution to an uncertainty.
 type Term struct {
-	Name         string  `json:"name"`         // "repeatability", "resolution", "model", "second leg", ...
-	Standard     float64 `json:"standard"`     // standard uncertainty, in Scale
-	Scale        string  `json:"scale"`        // what Standard is in
-	DoF          DoF     `json:"dof"`          // degrees of freedom; null: infinite
-	Sensitivity  float64 `json:"sensitivity"`  // change of the result per unit of Scale
-	Contribution float64 `json:"contribution"` // to the result's standard uncertainty: |Sensitivity| Standard, set by Combine
-	Source       string  `json:"source"`       // where it comes from
+	Name         string       `json:"name"`     // "repeatability", "resolution", "model", "second leg", ...
+	Standard     float64      `json:"standard"` // standard uncertainty, in Scale
+	Scale        string       `json:"scale"`    // what Standard is in
+	DoF          DoF          `json:"dof"`      // degrees of freedom; null: infinite
+	Distribution Distribution `json:"distribution"`
+	Sensitivity  float64      `json:"sensitivity"`  // change of the result per unit of Scale
+	Contribution float64      `json:"contribution"` // to the result's standard uncertainty: |Sensitivity| Standard, set by Combine
+	Source       string       `json:"source"`       // where it comes from
+}
+
+// Repeatability is the name of the term that the scatter of the readings makes.
+const Repeatability = "repeatability"
+
+// RepeatabilityTerm is the uncertainty of the mean of n readings whose standard
+// deviation is sd, in their own scale.
+func RepeatabilityTerm(n int, sd float64) Term {
+	return Term{
+		Name: Repeatability, Standard: sd / math.Sqrt(float64(n)), DoF: DoF(n - 1), Distribution: Student,
+		Source: "Standard deviation of the mean of the readings, JCGM 100, 4.2",
+	}
 }
 
 // Uncertainty is a combined uncertainty with the budget it comes from.
 type Uncertainty struct {
-	Standard float64 `json:"standard"` // combined standard uncertainty
-	Expanded float64 `json:"expanded"` // K times Standard
-	K        float64 `json:"k"`        // coverage factor for the confidence asked
-	DoF      DoF     `json:"dof"`      // effective degrees of freedom; null: infinite
-	Terms    []Term  `json:"terms"`
+	Standard float64  `json:"standard"` // combined standard uncertainty
+	Expanded float64  `json:"expanded"` // K times Standard
+	K        float64  `json:"k"`        // coverage factor for the confidence asked
+	DoF      DoF      `json:"dof"`      // effective degrees of freedom; null: infinite
+	Coverage Coverage `json:"coverage"` // where K comes from
+	Terms    []Term   `json:"terms"`
 }
+
+// Coverage says where a coverage factor comes from.
+type Coverage string
+
+// Where a coverage factor can come from.
+const (
+	ByDoF   Coverage = "degrees-of-freedom" // Student's factor, JCGM 100, G.4
+	ByTerms Coverage = "distributions"      // the distributions of the terms themselves, JCGM 101
+)
 
 // Combine combines independent terms by the law of propagation (JCGM 100,
 // 5.1.2), with effective degrees of freedom by Welch and Satterthwaite (G.4),
-// expanded to the confidence (0 to 1) by Student's factor. Degrees of freedom
-// must be above zero. The slice is copied.
+// expanded to the confidence (0 to 1) by Student's factor. Where that is known
+// to miss the coverage by more than 3 %, the terms' own distributions are added
+// up instead, as JCGM 101 does by drawing from them. Degrees of freedom must be
+// above zero. The slice is copied.
 func Combine(terms []Term, confidence float64) Uncertainty {
 	terms = append([]Term{}, terms...)
 	var variance, welch float64
@@ -57,13 +82,32 @@ func Combine(terms []Term, confidence float64) Uncertainty {
 			welch += c * c * c * c / float64(t.DoF) // an infinite one adds nothing
 		}
 	}
-	u := Uncertainty{Standard: math.Sqrt(variance), DoF: Infinite, Terms: terms}
+	u := Uncertainty{Standard: math.Sqrt(variance), DoF: Infinite, Coverage: ByDoF, Terms: terms}
 	if welch > 0 {
 		u.DoF = DoF(variance * variance / welch)
 	}
 	u.K = StudentFactor(confidence, float64(u.DoF))
+	if u.Standard > 0 && !closedFormHolds(terms, variance) {
+		u.Coverage = ByTerms
+		u.K = newSum(terms).coverage(confidence, u.K*u.Standard) / u.Standard
+	}
 	u.Expanded = u.K * u.Standard
 	return u
+}
+
+// closedFormHolds reports whether Student's factor for the effective degrees of
+// freedom meets the coverage of the sum within 3 %. It is too small where few
+// readings carry much of the variance, too large where one rectangular term
+// does; the bounds were found by comparison (TestClosedForm).
+func closedFormHolds(terms []Term, variance float64) bool {
+	for _, t := range terms {
+		share := t.Contribution * t.Contribution / variance
+		dof := float64(t.DoF)
+		if t.Distribution == Student && share > dof*dof/600 || t.Distribution == Uniform && share > 0.35 {
+			return false
+		}
+	}
+	return true
 }
 
 // Rectangular returns the standard uncertainty of a value that lies anywhere

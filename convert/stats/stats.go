@@ -65,6 +65,15 @@ func StudentFactor(confidence, dof float64) float64 {
 	return student.Quantile(p)
 }
 
+// StudentCDF returns the probability that a value of Student's distribution with
+// dof degrees of freedom, which may be infinite, is at most t.
+func StudentCDF(t, dof float64) float64 {
+	if math.IsInf(dof, 1) {
+		return distuv.UnitNormal.CDF(t)
+	}
+	return distuv.StudentsT{Mu: 0, Sigma: 1, Nu: dof}.CDF(t)
+}
+
 // Where Student's quantile is taken from its expansion as it is (exact there to
 // 1e-11; the search loses more digits from 1e6 on), and where the expansion is
 // no use.

@@ -12,7 +12,7 @@ import (
 )
 
 // Unmarshal reads one JSON value into what v points to. An error is an *Error.
-// null leaves a value as it is, and makes a pointer nil.
+// null leaves a value as it is.
 func Unmarshal(data []byte, v any) error {
 	r := reader{data: data}
 	if err := r.value(reflect.ValueOf(v).Elem()); err != nil {
@@ -60,6 +60,9 @@ func (r *reader) syntax(want string) error {
 
 // wrong refuses the value that begins at a place.
 func (r *reader) wrong(start int, want string) error {
+	if start >= len(r.data) || strings.IndexByte(`"{[tfn-0123456789`, r.data[start]) < 0 {
+		return &Error{Problem: Syntax, Want: want, Got: r.excerpt(start)} // no value begins there
+	}
 	return &Error{Problem: WrongType, Want: want, Got: r.excerpt(start)}
 }
 
@@ -70,6 +73,10 @@ func (r *reader) excerpt(start int) string {
 	switch {
 	case len(rest) == 0:
 		return "nothing"
+	case rest[0] == '"':
+		if end := bytes.IndexByte(rest[1:], '"'); end >= 0 {
+			rest = rest[:end+2]
+		}
 	case rest[0] != '{' && rest[0] != '[':
 		if end := bytes.IndexAny(rest, ",]}\n"); end > 0 {
 			rest = rest[:end]
@@ -194,7 +201,7 @@ func (r *reader) object(v reflect.Value) error {
 			return r.syntax("a colon")
 		}
 		seen[i] = true
-		if err := r.value(v.Field(i)); err != nil {
+		if err := r.value(v.FieldByIndex(known[i].index)); err != nil {
 			return within(err, name)
 		}
 		if !r.take(',') {
@@ -278,7 +285,10 @@ func (r *reader) text() (string, error) {
 		switch c := r.data[r.at]; {
 		case c == '"':
 			r.at++
-			return strings.ToValidUTF8(string(b), "\uFFFD"), nil
+			if !utf8.Valid(b) {
+				b = []byte(string([]rune(string(b))))
+			}
+			return string(b), nil
 		case c < ' ':
 			return "", r.syntax("no control character in a text")
 		case c != '\\':

@@ -70,20 +70,30 @@ var (
 type field struct {
 	name      string
 	key       []byte // the name as it is written, with quotes and colon
+	index     []int  // where it stands, for reflect.Value.FieldByIndex
 	omitEmpty bool   // whether it is left out when empty
 }
 
 // fields remembers what the tags of each struct type say: reflect.Type to []field.
 var fields sync.Map
 
+// fieldsOf lists the fields of a struct, those of embedded structs among them.
 func fieldsOf(t reflect.Type) []field {
 	if known, ok := fields.Load(t); ok {
 		return known.([]field)
 	}
-	all := make([]field, t.NumField())
-	for i := range all {
-		name, options, _ := strings.Cut(t.Field(i).Tag.Get("json"), ",")
-		all[i] = field{name: name, key: append(appendText(nil, name), ':'), omitEmpty: options == "omitempty"}
+	var all []field
+	for i := range t.NumField() {
+		f := t.Field(i)
+		if f.Anonymous {
+			for _, inner := range fieldsOf(f.Type) {
+				inner.index = append([]int{i}, inner.index...)
+				all = append(all, inner)
+			}
+			continue
+		}
+		name, options, _ := strings.Cut(f.Tag.Get("json"), ",")
+		all = append(all, field{name: name, key: append(appendText(nil, name), ':'), index: []int{i}, omitEmpty: options == "omitempty"})
 	}
 	fields.Store(t, all)
 	return all

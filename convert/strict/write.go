@@ -46,8 +46,8 @@ func appendValue(b []byte, v reflect.Value) ([]byte, error) {
 func appendObject(b []byte, v reflect.Value) ([]byte, error) {
 	b = append(b, '{')
 	first := true
-	for i, f := range fieldsOf(v.Type()) {
-		value := v.Field(i)
+	for _, f := range fieldsOf(v.Type()) {
+		value := v.FieldByIndex(f.index)
 		if f.omitEmpty && empty(value) {
 			continue
 		}

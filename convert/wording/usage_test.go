@@ -13,11 +13,20 @@ import (
 )
 
 // says are the functions that take the code of a sentence, and where.
-var says = map[string]int{"NewError": 0, "Say": 0, "find": 0, "refuse": 1}
+var says = map[string]int{"NewError": 0, "Say": 0, "find": 0, "refuse": 1, "say": 1}
 
 // putTogether are the codes that the sources put together from a beginning and
 // what is only known when they run.
-var putTogether = map[string][]string{"scale-": {"scale-below", "scale-above"}}
+var putTogether = map[string][]string{
+	"scale-": {"scale-below", "scale-above"},
+	"verdict-": {
+		"verdict-conforms-min", "verdict-conforms-max", "verdict-conforms-both",
+		"verdict-does-not-conform-min", "verdict-does-not-conform-max",
+		"verdict-not-proven-min", "verdict-not-proven-max", "verdict-not-proven-both",
+		"verdict-conforms-min-simple", "verdict-conforms-max-simple", "verdict-conforms-both-simple",
+		"verdict-does-not-conform-min-simple", "verdict-does-not-conform-max-simple",
+	},
+}
 
 // usage is what the sources say, each with the place where they do.
 type usage struct {

@@ -21,6 +21,8 @@ const (
 	Warn   Kind = "warn"   // a finding: the result stands, but marked
 	Note   Kind = "note"   // a finding: good to know
 	Reason Kind = "reason" // why a scale has no value
+	Ruling Kind = "ruling" // a verdict, or what it rests on
+	Advice Kind = "advice" // what to do after a verdict
 	Fault  Kind = "error"  // what was handed in is refused
 )
 
@@ -30,7 +32,7 @@ type Sentence struct {
 	Code    string `json:"code"`
 	Kind    Kind   `json:"kind"`
 	Message string `json:"message"`
-	Remedy  string `json:"remedy"` // "" for a reason and an error, whose message holds the remedy
+	Remedy  string `json:"remedy"` // "" but for a finding: an error's message holds the remedy
 	Source  string `json:"source"` // "" where nothing is cited
 }
 

@@ -33,7 +33,7 @@ func TestEverySentenceIsWhole(t *testing.T) {
 			t.Errorf("%s stands twice", s.Code)
 		}
 		seen[s.Code] = true
-		if !slices.Contains([]Kind{Stop, Warn, Note, Reason, Fault}, s.Kind) {
+		if !slices.Contains([]Kind{Stop, Warn, Note, Reason, Ruling, Advice, Fault}, s.Kind) {
 			t.Errorf("%s: unknown kind %q", s.Code, s.Kind)
 		}
 		finding := s.Kind == Stop || s.Kind == Warn || s.Kind == Note

@@ -23,6 +23,10 @@ import (
 var roots = []string{
 	"convert.Sheet",
 	"convert.Catalogue",
+	"convert.GoNoGoRequest",
+	"convert.GoNoGo",
+	"convert.MoreReadingsRequest",
+	"convert.MoreReadings",
 	"record.Record",
 	"wording.Error",
 	"wording.Sentence",

@@ -31,7 +31,7 @@ func Tables() ([]byte, error) {
 			if err != nil {
 				return nil, fmt.Errorf("device %s on %s: %w", d.Key, g.Key, err)
 			}
-			fmt.Fprintf(&b, "%s,%s,%s,%s\n", d.Key, g.Key, join(hvs, -1), join(hls, 4))
+			fmt.Fprintf(&b, "%s,%s,%s,%s\n", d.Key, g.Key, join(hvs, -1), join(hls, 2))
 		}
 	}
 	return b.Bytes(), nil

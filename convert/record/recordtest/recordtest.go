@@ -12,6 +12,7 @@ import (
 	"strikebook/convert/metal"
 	"strikebook/convert/record"
 	"strikebook/convert/scale"
+	"strikebook/convert/verdict"
 )
 
 // Random returns a valid record, made so that it comes back from its JSON
@@ -20,22 +21,23 @@ import (
 // need not make sense as a measurement. Equal generators make equal records.
 func Random(rng *rand.Rand) record.Record {
 	r := record.Record{
-		V:          record.Version,
-		ID:         maybe(rng, text),
-		Label:      maybe(rng, text),
-		Job:        maybe(rng, text),
-		Taken:      maybe(rng, moment),
-		By:         maybe(rng, text),
-		Notes:      maybe(rng, text),
-		Zone:       pick(rng, "", record.Base, record.HAZ, record.Weld, record.Other),
-		Serial:     maybe(rng, text),
-		Direction:  pick(rng, append(device.Directions(), "")...),
-		Group:      maybe(rng, func(rng *rand.Rand) string { return pick(rng, metal.All()...).Key }),
-		Readings:   list(rng, reading),
-		Piece:      maybe(rng, piece),
-		Block:      maybe(rng, block),
-		Limit:      maybe(rng, limit),
-		Confidence: pick(rng, 0, record.LeastConfidence, 0.68, record.DefaultConfidence, record.GreatestConfidence),
+		V:                record.Version,
+		ID:               maybe(rng, text),
+		Label:            maybe(rng, text),
+		Job:              maybe(rng, text),
+		Taken:            maybe(rng, moment),
+		By:               maybe(rng, text),
+		Notes:            maybe(rng, text),
+		Zone:             pick(rng, "", record.Base, record.HAZ, record.Weld, record.Other),
+		Serial:           maybe(rng, text),
+		Direction:        pick(rng, append(device.Directions(), "")...),
+		Group:            maybe(rng, func(rng *rand.Rand) string { return pick(rng, metal.All()...).Key }),
+		Readings:         list(rng, reading),
+		Piece:            maybe(rng, piece),
+		Block:            maybe(rng, block),
+		Limit:            maybe(rng, limit),
+		PermissibleError: maybe(rng, quantity),
+		Confidence:       pick(rng, 0, record.LeastConfidence, 0.68, record.DefaultConfidence, record.GreatestConfidence),
 	}
 	r.Device, r.Scale = instrument(rng)
 	return r
@@ -176,22 +178,24 @@ func quantity(rng *rand.Rand) *float64 {
 	return &v
 }
 
-func piece(rng *rand.Rand) *record.Piece {
-	return &record.Piece{
+func piece(rng *rand.Rand) *device.Piece {
+	return &device.Piece{
 		MassKg:       maybe(rng, quantity),
 		ThicknessMm:  maybe(rng, quantity),
 		RadiusMm:     maybe(rng, quantity),
 		RaUm:         maybe(rng, quantity),
 		TemperatureC: maybe(rng, quantity),
-		Support:      pick(rng, "", record.Free, record.Supported, record.Coupled),
+		Support:      pick(rng, "", device.Free, device.Supported, device.Coupled),
 		CaseMm:       maybe(rng, quantity),
+		SpacingMm:    maybe(rng, quantity),
+		EdgeMm:       maybe(rng, quantity),
 		Shape:        maybe(rng, shape),
 	}
 }
 
-func shape(rng *rand.Rand) *record.Shape {
-	return &record.Shape{
-		Kind:            pick(rng, "", record.Plate, record.Pipe, record.Bar, record.NoShape),
+func shape(rng *rand.Rand) *device.Shape {
+	return &device.Shape{
+		Kind:            pick(rng, "", device.Plate, device.Pipe, device.Bar, device.NoShape),
 		LengthMm:        maybe(rng, quantity),
 		WidthMm:         maybe(rng, quantity),
 		OuterDiameterMm: maybe(rng, quantity),
@@ -205,10 +209,12 @@ func block(rng *rand.Rand) *record.Block {
 		ExpandedU: maybe(rng, quantity),
 		Readings:  list(rng, number),
 		Tolerance: maybe(rng, quantity),
+		Taken:     maybe(rng, moment),
+		Use:       pick(rng, "", record.AsUncertainty, record.AsCorrection),
 	}
 }
 
-func limit(rng *rand.Rand) *record.Limit {
+func limit(rng *rand.Rand) *verdict.Limit {
 	choices := []scale.Key{""}
 	for _, d := range device.All() {
 		choices = append(choices, scale.Key(d.Scale))
@@ -216,10 +222,10 @@ func limit(rng *rand.Rand) *record.Limit {
 	for _, s := range scale.Converted() {
 		choices = append(choices, s.Key)
 	}
-	return &record.Limit{
+	return &verdict.Limit{
 		Scale: pick(rng, choices...),
 		Min:   maybe(rng, quantity),
 		Max:   maybe(rng, quantity),
-		Rule:  pick(rng, "", record.Guarded, record.Simple, record.OneSided95),
+		Rule:  pick(rng, append(verdict.Rules(), "")...),
 	}
 }

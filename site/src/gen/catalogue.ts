@@ -170,7 +170,7 @@ export const catalogue: Catalogue = {
         "HS",
         "Rm"
       ],
-      "source": "Material groups for the rebound model. E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
+      "source": "Material groups for the rebound model. density, E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
     },
     {
       "key": "tool-steel",
@@ -187,7 +187,7 @@ export const catalogue: Catalogue = {
         "HRA",
         "HS"
       ],
-      "source": "Material groups for the rebound model. E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
+      "source": "Material groups for the rebound model. density, E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
     },
     {
       "key": "martensitic-stainless",
@@ -204,7 +204,7 @@ export const catalogue: Catalogue = {
         "HRA",
         "HS"
       ],
-      "source": "Material groups for the rebound model. E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
+      "source": "Material groups for the rebound model. density, E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
     },
     {
       "key": "austenitic-stainless",
@@ -218,7 +218,7 @@ export const catalogue: Catalogue = {
         "HBW",
         "HRB"
       ],
-      "source": "Material groups for the rebound model. E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
+      "source": "Material groups for the rebound model. density, E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
     },
     {
       "key": "duplex-stainless",
@@ -231,7 +231,7 @@ export const catalogue: Catalogue = {
         "HV",
         "HBW"
       ],
-      "source": "Material groups for the rebound model. E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
+      "source": "Material groups for the rebound model. density, E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
     },
     {
       "key": "grey-iron",
@@ -244,7 +244,7 @@ export const catalogue: Catalogue = {
         "HV",
         "HBW"
       ],
-      "source": "Material groups for the rebound model. E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
+      "source": "Material groups for the rebound model. density, E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
     },
     {
       "key": "ductile-iron",
@@ -257,7 +257,7 @@ export const catalogue: Catalogue = {
         "HV",
         "HBW"
       ],
-      "source": "Material groups for the rebound model. E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
+      "source": "Material groups for the rebound model. density, E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
     },
     {
       "key": "aluminium",
@@ -271,7 +271,7 @@ export const catalogue: Catalogue = {
         "HBW",
         "HRB"
       ],
-      "source": "Material groups for the rebound model. E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
+      "source": "Material groups for the rebound model. density, E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
     },
     {
       "key": "brass",
@@ -286,7 +286,7 @@ export const catalogue: Catalogue = {
         "HRB",
         "HRF"
       ],
-      "source": "Material groups for the rebound model. E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
+      "source": "Material groups for the rebound model. density, E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
     },
     {
       "key": "bronze",
@@ -299,7 +299,7 @@ export const catalogue: Catalogue = {
         "HV",
         "HBW"
       ],
-      "source": "Material groups for the rebound model. E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
+      "source": "Material groups for the rebound model. density, E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
     },
     {
       "key": "copper",
@@ -312,7 +312,7 @@ export const catalogue: Catalogue = {
         "HV",
         "HBW"
       ],
-      "source": "Material groups for the rebound model. E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
+      "source": "Material groups for the rebound model. density, E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
     },
     {
       "key": "nickel-alloy",
@@ -328,7 +328,7 @@ export const catalogue: Catalogue = {
         "HRB",
         "HRA"
       ],
-      "source": "Material groups for the rebound model. E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
+      "source": "Material groups for the rebound model. density, E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
     },
     {
       "key": "titanium",
@@ -341,7 +341,7 @@ export const catalogue: Catalogue = {
         "HV",
         "HBW"
       ],
-      "source": "Material groups for the rebound model. E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
+      "source": "Material groups for the rebound model. density, E, nu: handbook values (ASM Handbook class), from memory. rate_factor, overstress_hv, return_rel: engineering estimates, see package rebound. u_hl_percent: standard uncertainty of the model, percent of HL."
     }
   ],
   "scales": [
@@ -520,6 +520,109 @@ export const catalogue: Catalogue = {
       "leeb": false,
       "direct": false,
       "source": "Hardness scales: least and greatest value of the scale itself (ISO 6506-1, ISO 6508-1; blank: the conversion table sets it), places and step of a quoted value, step of a usual display (common practice, no source)."
+    }
+  ],
+  "rules": [
+    "guarded",
+    "one-sided-95",
+    "simple"
+  ],
+  "limits": [
+    {
+      "key": "sour-base",
+      "text": "Sour service, carbon and low-alloy steel",
+      "scale": "HRC",
+      "min": null,
+      "max": 22,
+      "source": "ISO 15156-2 / NACE MR0175, from memory: check the edition your contract names"
+    },
+    {
+      "key": "sour-weld",
+      "text": "Sour service, weld procedure",
+      "scale": "HV",
+      "min": null,
+      "max": 250,
+      "source": "ISO 15156-2 / NACE MR0175, from memory: check the edition your contract names"
+    },
+    {
+      "key": "refinery-weld",
+      "text": "Refinery carbon steel weld deposit",
+      "scale": "HBW",
+      "min": null,
+      "max": 200,
+      "source": "NACE SP0472, from memory: check the edition your contract names"
+    },
+    {
+      "key": "refinery-haz",
+      "text": "Refinery heat-affected zone",
+      "scale": "HV",
+      "min": null,
+      "max": 248,
+      "source": "NACE SP0472 / MR0103, from memory: check the edition your contract names"
+    },
+    {
+      "key": "weld-g12-aw",
+      "text": "Weld procedure, steel groups 1 and 2, as welded",
+      "scale": "HV",
+      "min": null,
+      "max": 380,
+      "source": "EN ISO 15614-1, from memory: check the edition your contract names"
+    },
+    {
+      "key": "weld-g12-ht",
+      "text": "Weld procedure, steel groups 1 and 2, heat treated",
+      "scale": "HV",
+      "min": null,
+      "max": 320,
+      "source": "EN ISO 15614-1, from memory: check the edition your contract names"
+    },
+    {
+      "key": "pwht-p3-p4",
+      "text": "Piping after heat treatment, P-No. 3 and 4",
+      "scale": "HBW",
+      "min": null,
+      "max": 225,
+      "source": "ASME B31.3 (editions with a hardness column), from memory: check the edition your contract names"
+    },
+    {
+      "key": "pwht-p5-p6",
+      "text": "Piping after heat treatment, P-No. 5 and 6",
+      "scale": "HBW",
+      "min": null,
+      "max": 241,
+      "source": "ASME B31.3 (editions with a hardness column), from memory: check the edition your contract names"
+    },
+    {
+      "key": "grade-91",
+      "text": "Grade 91 base metal",
+      "scale": "HBW",
+      "min": 190,
+      "max": 250,
+      "source": "ASTM A335 / A213, from memory: check the edition your contract names"
+    },
+    {
+      "key": "linepipe-sour",
+      "text": "Line pipe for sour service",
+      "scale": "HV",
+      "min": null,
+      "max": 250,
+      "source": "API 5L Annex H, from memory: check the edition your contract names"
+    },
+    {
+      "key": "bolt-b7",
+      "text": "Bolting grade B7",
+      "scale": "HBW",
+      "min": null,
+      "max": 321,
+      "source": "ASTM A193, from memory: check the edition your contract names"
+    },
+    {
+      "key": "bolt-b7m",
+      "text": "Bolting grade B7M",
+      "scale": "HBW",
+      "min": null,
+      "max": 235,
+      "source": "ASTM A193, from memory: check the edition your contract names"
     }
   ]
 };

@@ -8,6 +8,10 @@ export interface Catalogue {
   directions: DirectionChoice[];
   groups: GroupChoice[];
   scales: ScaleChoice[];
+  /** of decision, the default first */
+  rules: Rule[];
+  /** that published codes name */
+  limits: LimitChoice[];
 }
 
 /** DeviceChoice is an impact device. */
@@ -61,6 +65,173 @@ export interface ScaleChoice {
   source: string;
 }
 
+/** LimitChoice is a limit that a published code names. */
+export interface LimitChoice {
+  key: string;
+  /** English */
+  text: string;
+  scale: Key;
+  /** null: none */
+  min: number | null;
+  /** null: none */
+  max: number | null;
+  source: string;
+}
+
+/**
+ * GoNoGoRequest is a record before its readings are taken, with what is assumed
+ * of them. Readings it has are left out of account.
+ */
+export interface GoNoGoRequest {
+  /** version of this layout, 1 */
+  v: number;
+  /** told apart from other records by it; the core does not read it */
+  id?: string;
+  /** the spot: "Shell course 2, 3 o'clock" */
+  label?: string;
+  /** the job it belongs to */
+  job?: string;
+  /** when, RFC 3339 */
+  taken?: string;
+  /** who */
+  by?: string;
+  /** anything else */
+  notes?: string;
+  /** the part of a weld */
+  zone?: Zone;
+  /** key of the impact device; "" for a direct method */
+  device?: string;
+  /** of the instrument */
+  serial?: string;
+  /** of impact; down unless told */
+  direction?: Direction;
+  /** what the readings are in; the device's unless told */
+  scale?: Key;
+  /** key of the metal group; "" while it is not chosen */
+  group?: string;
+  /** in the order they were taken, struck ones too */
+  readings: Reading[];
+  /** the test piece */
+  piece?: Piece;
+  /** the check on a test block */
+  block?: Block;
+  /** what the spot has to meet */
+  limit?: Limit;
+  /** must be null, see Curve */
+  curve?: Curve;
+  /**
+   * PermissibleError is how far the instrument may read wrong to either side, in
+   * the record's scale, where no block check says how far it does; 12 HL unless told.
+   */
+  permissible_error?: number;
+  /** of the expanded uncertainty, 0.5 to 0.999; 0.95 unless told */
+  confidence?: number;
+  /** how many readings will be taken, 1 to record.MaxReadings */
+  n: number;
+  /** the standard deviation they are assumed to have, in the record's scale */
+  sd: number;
+}
+
+/**
+ * GoNoGo is what the mean of the readings decides, in the record's scale and as
+ * the instrument shows it, before any correction.
+ */
+export interface GoNoGo {
+  scale: Key;
+  /** the means, least and greatest, that conform; [] where none does */
+  conforms: number[];
+  /** the spans of means that do not */
+  doesNotConform: number[][];
+  /** the spans of means that prove nothing either way */
+  notProven: number[][];
+  /** rounded inwards, to be safe */
+  shownConforms: string[];
+  /** rounded inwards */
+  shownDoesNotConform: string[][];
+  /** one sentence where there is no span at all; else "" */
+  reason: string;
+  reasonCode: string;
+  reasonParams: Params;
+}
+
+/**
+ * MoreReadingsRequest is a record with the expanded uncertainty that is wanted
+ * of one of its scales.
+ */
+export interface MoreReadingsRequest {
+  /** version of this layout, 1 */
+  v: number;
+  /** told apart from other records by it; the core does not read it */
+  id?: string;
+  /** the spot: "Shell course 2, 3 o'clock" */
+  label?: string;
+  /** the job it belongs to */
+  job?: string;
+  /** when, RFC 3339 */
+  taken?: string;
+  /** who */
+  by?: string;
+  /** anything else */
+  notes?: string;
+  /** the part of a weld */
+  zone?: Zone;
+  /** key of the impact device; "" for a direct method */
+  device?: string;
+  /** of the instrument */
+  serial?: string;
+  /** of impact; down unless told */
+  direction?: Direction;
+  /** what the readings are in; the device's unless told */
+  scale?: Key;
+  /** key of the metal group; "" while it is not chosen */
+  group?: string;
+  /** in the order they were taken, struck ones too */
+  readings: Reading[];
+  /** the test piece */
+  piece?: Piece;
+  /** the check on a test block */
+  block?: Block;
+  /** what the spot has to meet */
+  limit?: Limit;
+  /** must be null, see Curve */
+  curve?: Curve;
+  /**
+   * PermissibleError is how far the instrument may read wrong to either side, in
+   * the record's scale, where no block check says how far it does; 12 HL unless told.
+   */
+  permissible_error?: number;
+  /** of the expanded uncertainty, 0.5 to 0.999; 0.95 unless told */
+  confidence?: number;
+  wanted: Wanted;
+}
+
+/** Wanted is the expanded uncertainty that is wanted in a scale. */
+export interface Wanted {
+  scale: Key;
+  /** in the scale */
+  expanded: number;
+}
+
+/**
+ * MoreReadings says how many readings a wanted uncertainty takes, if their mean
+ * and scatter stay.
+ */
+export interface MoreReadings {
+  /** whether any number of readings would do */
+  reachable: boolean;
+  /** how many in all; 0 unless reachable */
+  n: number;
+  /** how many of them are still to be taken */
+  more: number;
+  /** what it is now; null where the scale has no value */
+  expanded: number | null;
+  /** what N readings reach, or verdict.MostReadings if that is not enough */
+  best: number | null;
+  sentence: string;
+  code: string;
+  params: Params;
+}
+
 /**
  * Sheet is everything there is to say about one record. Numbers are unrounded;
  * the fields whose names begin with "shown" hold the quotable forms. A number
@@ -71,6 +242,12 @@ export interface Sheet {
   edition: string;
   /** what the readings are in; "" while it is not chosen */
   scale: Key;
+  /** the test piece */
+  piece: TestPiece;
+  /** every device there is against the test piece */
+  devices: DeviceFit[];
+  /** the check on a test block */
+  block: BlockCheck;
   /** the readings that count, as they were taken */
   readings: Readings;
   /** their mean, corrected */
@@ -79,8 +256,55 @@ export interface Sheet {
   uncertainty: Uncertainty | null;
   /** the reading's own scale first, then every other */
   scales: Row[];
+  /** against the limit */
+  verdict: Verdict;
   /** in the order of the job */
   findings: Finding[];
+}
+
+/** BlockCheck is what a check on a test block says of the instrument. */
+export interface BlockCheck {
+  status: BlockStatus;
+  /** readings on the block */
+  n: number;
+  /** in the sheet's scale */
+  mean: number | null;
+  /** their sample standard deviation */
+  sd: number | null;
+  /** mean less certified value; null unless the check is complete */
+  error: number | null;
+  /** what it may be; null where nothing says */
+  tolerance: number | null;
+}
+
+/** BlockStatus is what a check on a block comes to. */
+export type BlockStatus = "passed" | "failed" | "used" | "incomplete" | "none";
+
+/** TestPiece is what is known of the test piece's size, null where it is not. */
+export interface TestPiece {
+  /** as stated, else computed from shape and density */
+  massKg: number | null;
+  /** whether it was computed */
+  massComputed: boolean;
+  /** under the spot: as stated, a pipe's wall if that is less, a bar's diameter if nothing is stated */
+  thicknessMm: number | null;
+  /** of a curved surface: as stated, else half the outer diameter of a pipe or bar */
+  radiusMm: number | null;
+}
+
+/**
+ * DeviceFit says how an impact device and the test piece go together. What is
+ * not known of the piece does not count against the device.
+ */
+export interface DeviceFit {
+  /** its key */
+  device: string;
+  /** whether the piece falls short in nothing */
+  suits: boolean;
+  /** what it falls short in, if the device is used; the codes of the findings there would be */
+  shortfalls: ShortfallKind[];
+  /** whether the device has a built-in conversion, which is then for every metal */
+  curve: boolean;
 }
 
 /** Readings describes the readings that count. */
@@ -191,8 +415,85 @@ export interface Finding {
   source: string;
 }
 
+/** Verdict is the spot against its limit. */
+export interface Verdict {
+  outcome: Outcome;
+  /** by which it was decided */
+  rule: Rule;
+  /** in which it was decided: the limit's own, or HV; "" where nothing was compared */
+  scale: Key;
+  /** in Scale; null where nothing was compared, and so are the next five */
+  value: number | null;
+  /** of the limit, in Scale; null also where there is none */
+  min: number | null;
+  /** of the limit, in Scale; null also where there is none */
+  max: number | null;
+  /** what the rule asks for between value and limit */
+  guard: number | null;
+  /** uncertainty of the comparison */
+  expanded: number | null;
+  /** of conformity, JCGM 106 */
+  probability: number | null;
+  /** for a foreman */
+  sentence: string;
+  /** how the comparison was made, where not in the limit's own scale; else "" */
+  basis: string;
+  /** what to do now; "" where there is nothing to do */
+  advice: string;
+  /** the three by their codes, those that are not "" */
+  said: Saying[];
+}
+
+/** Saying is a sentence by its code. */
+export interface Saying {
+  /** "sentence", "basis" or "advice" */
+  part: string;
+  code: string;
+  params: Params;
+}
+
 /** Direction is the direction of impact. */
 export type Direction = "down" | "down45" | "level" | "up45" | "up" | "compensated";
+
+/** Piece is what was written down about the test piece. Nothing of it must be there. */
+export interface Piece {
+  /** computed from the shape unless told */
+  mass_kg?: number;
+  thickness_mm?: number;
+  /** of a curved surface, at the spot */
+  radius_mm?: number;
+  /** roughness Ra */
+  ra_um?: number;
+  /** of the piece */
+  temperature_c?: number;
+  /** free unless told */
+  support?: Support;
+  /** depth of a hardened case */
+  case_mm?: number;
+  /** least distance from one impression to the next */
+  spacing_mm?: number;
+  /** least distance from an impression to an edge */
+  edge_mm?: number;
+  shape?: Shape;
+}
+
+/** Support is how the test piece lies. */
+export type Support = "free" | "supported" | "coupled";
+
+/** Shape is the test piece's shape and size. */
+export interface Shape {
+  kind: ShapeKind;
+  length_mm?: number;
+  width_mm?: number;
+  outer_diameter_mm?: number;
+  wall_mm?: number;
+}
+
+/** ShapeKind is the kind of a shape. */
+export type ShapeKind = "plate" | "pipe" | "bar" | "none";
+
+/** ShortfallKind is what a test piece falls short in, the code of its finding. */
+export type ShortfallKind = "piece-too-light" | "piece-too-thin" | "wall-too-thin" | "case-too-thin" | "surface-too-rough" | "radius-too-small" | "spacing-too-close" | "edge-too-near" | "temperature-outside";
 
 /**
  * Record is what was written down about one spot. Only V and Readings must be
@@ -235,6 +536,11 @@ export interface Record {
   limit?: Limit;
   /** must be null, see Curve */
   curve?: Curve;
+  /**
+   * PermissibleError is how far the instrument may read wrong to either side, in
+   * the record's scale, where no block check says how far it does; 12 HL unless told.
+   */
+  permissible_error?: number;
   /** of the expanded uncertainty, 0.5 to 0.999; 0.95 unless told */
   confidence?: number;
 }
@@ -250,56 +556,27 @@ export interface Reading {
   struck?: string;
 }
 
-/** Piece is the test piece. */
-export interface Piece {
-  mass_kg?: number;
-  thickness_mm?: number;
-  /** of a curved surface, at the spot */
-  radius_mm?: number;
-  /** roughness Ra */
-  ra_um?: number;
-  temperature_c?: number;
-  support?: Support;
-  /** depth of a hardened case */
-  case_mm?: number;
-  shape?: Shape;
-}
-
-/** Support is how the test piece lies. */
-export type Support = "free" | "supported" | "coupled";
-
-/** Shape is the test piece's shape and size. */
-export interface Shape {
-  kind: ShapeKind;
-  length_mm?: number;
-  width_mm?: number;
-  outer_diameter_mm?: number;
-  wall_mm?: number;
-}
-
-/** ShapeKind is the kind of a shape. */
-export type ShapeKind = "plate" | "pipe" | "bar" | "none";
-
 /** Block is a check on a hardness test block. */
 export interface Block {
   /** in the record's scale */
   certified?: number;
-  /** of the certified value */
+  /** of the certified value, with a coverage factor of 2 */
   expanded_u?: number;
+  /** on the block, in the record's scale */
   readings?: Number[];
+  /** of their mean, to either side of the certified value; 6 HL unless told */
   tolerance?: number;
+  /** when, RFC 3339 */
+  taken?: string;
+  /** what the offset is used for; uncertainty unless told */
+  use?: BlockUse;
 }
 
-/** Limit is what the spot has to meet. */
-export interface Limit {
-  scale: Key;
-  min?: number;
-  max?: number;
-  rule?: Rule;
-}
-
-/** Rule is a decision rule. */
-export type Rule = "guarded" | "simple" | "one-sided-95";
+/**
+ * BlockUse says what the offset that a block check finds is used for. It is
+ * never both.
+ */
+export type BlockUse = "uncertainty" | "correction";
 
 /**
  * Curve stands where a record would carry a curve of its own. This edition
@@ -346,6 +623,7 @@ export interface Term {
   scale: string;
   /** degrees of freedom; null: infinite */
   dof: DoF;
+  distribution: Distribution;
   /** change of the result per unit of Scale */
   sensitivity: number;
   /** to the result's standard uncertainty: |Sensitivity| Standard, set by Combine */
@@ -364,11 +642,35 @@ export interface Uncertainty {
   k: number;
   /** effective degrees of freedom; null: infinite */
   dof: DoF;
+  /** where K comes from */
+  coverage: Coverage;
   terms: Term[];
 }
 
+/** Coverage says where a coverage factor comes from. */
+export type Coverage = "degrees-of-freedom" | "distributions";
+
+/** Distribution is what is known of the values a term can take. */
+export type Distribution = "normal" | "rectangular" | "student";
+
+/** Limit is what a spot has to meet, as it was written down. */
+export interface Limit {
+  scale: Key;
+  /** null: none */
+  min?: number;
+  /** null: none */
+  max?: number;
+  rule?: Rule;
+}
+
+/** Rule is a decision rule. */
+export type Rule = "guarded" | "simple" | "one-sided-95";
+
+/** Outcome is what a comparison comes to. */
+export type Outcome = "conforms" | "does-not-conform" | "not-proven" | "cannot-say" | "no-limit";
+
 /** Kind says what a sentence is for. */
-export type Kind = "stop" | "warn" | "note" | "reason" | "error";
+export type Kind = "stop" | "warn" | "note" | "reason" | "ruling" | "advice" | "error";
 
 /**
  * Sentence is one sentence with its place-holders: {name} stands for a
@@ -378,7 +680,7 @@ export interface Sentence {
   code: string;
   kind: Kind;
   message: string;
-  /** "" for a reason and an error, whose message holds the remedy */
+  /** "" but for a finding: an error's message holds the remedy */
   remedy: string;
   /** "" where nothing is cited */
   source: string;

@@ -4,6 +4,83 @@ import type { Sentence } from "./contract";
 
 export const sentences: Sentence[] = [
   {
+    "code": "bad-quantity",
+    "kind": "stop",
+    "message": "The field {path} must lie above {lo} and not above {hi}, but it is {got}.",
+    "remedy": "Correct it, or leave it empty where it is not known.",
+    "source": "Bounds of what can be (common practice, no source)"
+  },
+  {
+    "code": "piece-too-light",
+    "kind": "stop",
+    "message": "The test piece weighs {have} kg, {by} kg less than the {need} kg that device {device} needs of a piece that lies as this one does.",
+    "remedy": "Support it better if that is enough: device {device} needs {free} kg of a free piece, {supported} kg on a solid support, {coupled} kg coupled to a solid plate. Devices for such a piece as it lies: {devices}; if none is named, use a direct portable method.",
+    "source": "ISO 16859-1 and ASTM A956, from memory: check your edition"
+  },
+  {
+    "code": "piece-too-thin",
+    "kind": "stop",
+    "message": "The test piece is {have} mm thick, {by} mm less than the {need} mm that device {device} needs of a piece that lies as this one does.",
+    "remedy": "Couple it to a backing plate if that is enough: device {device} needs {uncoupledThickness} mm uncoupled, {coupledThickness} mm coupled. Devices for such a piece as it lies: {devices}; if none is named, use a direct portable method.",
+    "source": "ISO 16859-1 and ASTM A956, from memory: check your edition"
+  },
+  {
+    "code": "wall-too-thin",
+    "kind": "stop",
+    "message": "The wall is {have} mm thick, {by} mm less than the {need} mm that device {device} needs, however heavy the whole pipe is: a thin wall springs under the impact.",
+    "remedy": "Couple a solid backing to the wall if that is enough: device {device} needs {uncoupledThickness} mm uncoupled, {coupledThickness} mm coupled. Devices for such a wall as it is: {devices}; if none is named, use a direct portable method.",
+    "source": "ISO 16859-1 and ASTM A956, from memory: check your edition"
+  },
+  {
+    "code": "case-too-thin",
+    "kind": "stop",
+    "message": "The hardened case is {have} mm deep, {by} mm less than the {need} mm that device {device} needs: a reading would show the case and the core in one.",
+    "remedy": "Use a device for such a case: {devices}; if none is named, use a direct portable method with a light test force.",
+    "source": "ISO 16859-1 and ASTM A956, from memory: check your edition"
+  },
+  {
+    "code": "surface-too-rough",
+    "kind": "warn",
+    "message": "The surface has a roughness Ra of {have} µm, {by} µm more than the {need} µm that device {device} allows.",
+    "remedy": "Grind the spot to Ra {need} µm or finer, without heating it. Devices that allow it as it is: {devices}.",
+    "source": "ISO 16859-1 and ASTM A956, from memory: check your edition"
+  },
+  {
+    "code": "radius-too-small",
+    "kind": "warn",
+    "message": "The surface is curved to a radius of {have} mm, {by} mm less than the {need} mm that device {device} needs without a support ring.",
+    "remedy": "Use a support ring that fits the curvature. Devices that need none: {devices}.",
+    "source": "ISO 16859-1 and ASTM A956, from memory: check your edition"
+  },
+  {
+    "code": "spacing-too-close",
+    "kind": "warn",
+    "message": "The impressions lie {have} mm apart, {by} mm closer than the {need} mm that device {device} needs: each hardens the metal around it.",
+    "remedy": "Space the impacts {need} mm or more, and strike the readings taken too close to another.",
+    "source": "ISO 16859-1 and ASTM A956, from memory: check your edition"
+  },
+  {
+    "code": "edge-too-near",
+    "kind": "warn",
+    "message": "The impressions lie {have} mm from an edge, {by} mm nearer than the {need} mm that device {device} needs.",
+    "remedy": "Move the spot to {need} mm or more from every edge.",
+    "source": "ISO 16859-1 and ASTM A956, from memory: check your edition"
+  },
+  {
+    "code": "temperature-outside",
+    "kind": "warn",
+    "message": "The test piece is at {have} °C, {by} °C outside {lo} to {hi} °C, for which readings are good.",
+    "remedy": "Let the piece reach {lo} to {hi} °C before testing. The ambient temperature ought to be 10 to 35 °C as well.",
+    "source": "ASTM A956 for the piece, ISO 16859-1 for the ambient temperature, from memory: check your edition"
+  },
+  {
+    "code": "piece-not-stated",
+    "kind": "note",
+    "message": "The test piece is not stated, so that its requirements are not checked: device {device} needs {free} kg ({supported} kg on a solid support, {coupled} kg coupled to a solid plate), {uncoupledThickness} mm of thickness ({coupledThickness} mm coupled), Ra {ra} µm or finer, a radius of {radius} mm, {spacing} mm between impressions and {edge} mm to an edge.",
+    "remedy": "State what is known of the piece, at least its mass and thickness.",
+    "source": "ISO 16859-1 and ASTM A956, from memory: check your edition"
+  },
+  {
     "code": "too-few-readings",
     "kind": "warn",
     "message": "Readings that count: {n}. A mean that stands needs at least {least}; until then its scatter is assumed, not known.",
@@ -95,6 +172,76 @@ export const sentences: Sentence[] = [
     "source": "GB/T 17394.1 annex, from memory: check your copy"
   },
   {
+    "code": "block-failed",
+    "kind": "stop",
+    "message": "The block check fails: the mean on the block is off by {error:1} {scale}, and {tolerance} {scale} is allowed.",
+    "remedy": "Do not use the instrument. Clean the ball and the block, check again; if it fails again, have it repaired and calibrated.",
+    "source": "ASTM A956, from memory: check your edition"
+  },
+  {
+    "code": "block-incomplete",
+    "kind": "warn",
+    "message": "The block check is not whole: its field {field} is missing. It needs the certified value, its expanded uncertainty and at least {least} readings. Until then the permissible error stands in.",
+    "remedy": "Complete the block check.",
+    "source": "Common practice, no source"
+  },
+  {
+    "code": "no-block-check",
+    "kind": "warn",
+    "message": "No check on a test block stands behind these readings, so the instrument may read wrong by {half} {scale} either way.",
+    "remedy": "Take at least three readings on a test block, and write them down with its certificate.",
+    "source": "Permissible error: GB/T 17394.2, from memory: check your edition"
+  },
+  {
+    "code": "no-block-check-direct",
+    "kind": "warn",
+    "message": "No check on a test block stands behind these readings, and nothing is known of how far wrong the instrument may read: the uncertainty given is too small by that much.",
+    "remedy": "Enter a block check, or the permissible error of the instrument.",
+    "source": "JCGM 100: every known influence belongs into the budget"
+  },
+  {
+    "code": "block-undated",
+    "kind": "note",
+    "message": "The block check and the readings do not both have a time, so the age of the check is not known.",
+    "remedy": "Write down when the check was made; it should be within {hours} hours of the readings.",
+    "source": "Common practice, no source"
+  },
+  {
+    "code": "block-old",
+    "kind": "warn",
+    "message": "The block check and the readings lie {apart:0} hours apart; at most {hours} are usual.",
+    "remedy": "Check the instrument again on the block.",
+    "source": "Common practice, no source"
+  },
+  {
+    "code": "bad-limit",
+    "kind": "warn",
+    "message": "The field {path} must be a number above 0 and at most {hi}, but it is {got}.",
+    "remedy": "Correct the limit, or leave the side open.",
+    "source": "Common practice, no source"
+  },
+  {
+    "code": "limit-no-scale",
+    "kind": "warn",
+    "message": "The limit has no scale.",
+    "remedy": "Choose the scale that the limit is given in.",
+    "source": "A hardness has no meaning without its scale"
+  },
+  {
+    "code": "limit-empty",
+    "kind": "warn",
+    "message": "The limit has neither a least nor a greatest value.",
+    "remedy": "Enter at least one of the two, or remove the limit.",
+    "source": "A limit bounds something"
+  },
+  {
+    "code": "limit-reversed",
+    "kind": "warn",
+    "message": "The least value of the limit, {min}, is above its greatest, {max}.",
+    "remedy": "Exchange or correct them.",
+    "source": "A limit bounds something"
+  },
+  {
     "code": "scale-below",
     "kind": "reason",
     "message": "Below {lo} {scale}, the least value the conversion gives for this metal.",
@@ -133,6 +280,216 @@ export const sentences: Sentence[] = [
     "code": "scale-withheld",
     "kind": "reason",
     "message": "Withheld: a finding above stops the conversion.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "verdict-no-limit",
+    "kind": "ruling",
+    "message": "No limit is set.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "verdict-no-readings",
+    "kind": "ruling",
+    "message": "No verdict yet: no reading counts.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "verdict-bad-limit",
+    "kind": "ruling",
+    "message": "No verdict: the limit is not whole.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "verdict-stopped",
+    "kind": "ruling",
+    "message": "No verdict: a finding stops it.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "verdict-no-way",
+    "kind": "ruling",
+    "message": "No verdict: nothing leads from {own} to {scale} on this metal.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "verdict-limit-outside",
+    "kind": "ruling",
+    "message": "No verdict: the spot has no value in {scale}, and the limit {limit} {scale} lies outside {lo} to {hi} {scale}, where it could be led to HV.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "verdict-conforms-max",
+    "kind": "ruling",
+    "message": "It conforms: {shown} ± {guard} lies wholly at or below {max} {scale}.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "verdict-conforms-min",
+    "kind": "ruling",
+    "message": "It conforms: {shown} ± {guard} lies wholly at or above {min} {scale}.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "verdict-conforms-both",
+    "kind": "ruling",
+    "message": "It conforms: {shown} ± {guard} lies wholly within {min} to {max} {scale}.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "verdict-does-not-conform-max",
+    "kind": "ruling",
+    "message": "It does not conform: even less {guard}, {shown} lies above {max} {scale}.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "verdict-does-not-conform-min",
+    "kind": "ruling",
+    "message": "It does not conform: even with {guard} more, {shown} lies below {min} {scale}.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "verdict-not-proven-max",
+    "kind": "ruling",
+    "message": "Not proven either way: {shown} ± {guard} reaches across {max} {scale}.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "verdict-not-proven-min",
+    "kind": "ruling",
+    "message": "Not proven either way: {shown} ± {guard} reaches across {min} {scale}.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "verdict-not-proven-both",
+    "kind": "ruling",
+    "message": "Not proven either way: {shown} ± {guard} reaches across both {min} and {max} {scale}.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "verdict-conforms-max-simple",
+    "kind": "ruling",
+    "message": "By its mean alone it conforms: {shown} is at or below {max} {scale}. Its uncertainty is left out of account.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "verdict-conforms-min-simple",
+    "kind": "ruling",
+    "message": "By its mean alone it conforms: {shown} is at or above {min} {scale}. Its uncertainty is left out of account.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "verdict-conforms-both-simple",
+    "kind": "ruling",
+    "message": "By its mean alone it conforms: {shown} is within {min} to {max} {scale}. Its uncertainty is left out of account.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "verdict-does-not-conform-max-simple",
+    "kind": "ruling",
+    "message": "By its mean alone it does not conform: {shown} is above {max} {scale}. Its uncertainty is left out of account.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "verdict-does-not-conform-min-simple",
+    "kind": "ruling",
+    "message": "By its mean alone it does not conform: {shown} is below {min} {scale}. Its uncertainty is left out of account.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "verdict-through-hv",
+    "kind": "ruling",
+    "message": "The spot has no valid value in {scale}, so the comparison is made in HV: {limit} {scale} answers to {hv} HV.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "advice-conforms",
+    "kind": "advice",
+    "message": "File the record with its readings; acceptance belongs to the governing code.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "advice-fails",
+    "kind": "advice",
+    "message": "Confirm it by the direct method the code names before anything is rejected or repaired.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "advice-stopped",
+    "kind": "advice",
+    "message": "Clear the finding that stops it; its remedy stands beside it.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "advice-direct",
+    "kind": "advice",
+    "message": "Measure in {scale} by the direct method the code names.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "advice-more-readings",
+    "kind": "advice",
+    "message": "More readings would settle it if mean and scatter stay: {more} more, {n} in all.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "advice-not-readings",
+    "kind": "advice",
+    "message": "More readings would not settle it: {percent:0} % of the doubt is the {term}. Use the direct method the code names.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "more-no-value",
+    "kind": "ruling",
+    "message": "The spot has no value in {scale}, so its uncertainty is not known.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "more-enough",
+    "kind": "ruling",
+    "message": "It is reached: {scale} is known within ± {expanded}.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "more-needed",
+    "kind": "ruling",
+    "message": "It takes {more} more readings, {n} in all, if mean and scatter stay: {scale} is then known within ± {best}.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "more-never",
+    "kind": "ruling",
+    "message": "No number of readings reaches it: even {most} leave ± {best} {scale}, for {percent} % of the doubt is the {term}.",
     "remedy": "",
     "source": ""
   },
@@ -209,7 +566,7 @@ export const sentences: Sentence[] = [
   {
     "code": "too-many-readings",
     "kind": "error",
-    "message": "The field readings holds {n} readings; a spot takes at most {limit}. Split them over several spots.",
+    "message": "The field {path} holds {n} readings; it takes at most {limit}. Split them over several spots.",
     "remedy": "",
     "source": ""
   },

@@ -1,0 +1,320 @@
+package convert
+
+import (
+	"cmp"
+	"math"
+	"slices"
+	"strings"
+
+	"strikebook/convert/scale"
+	"strikebook/convert/stats"
+	"strikebook/convert/verdict"
+	"strikebook/convert/wording"
+)
+
+// Verdict is the spot against its limit.
+type Verdict struct {
+	Outcome     verdict.Outcome `json:"outcome"`
+	Rule        verdict.Rule    `json:"rule"`        // by which it was decided
+	Scale       scale.Key       `json:"scale"`       // in which it was decided: the limit's own, or HV; "" where nothing was compared
+	Value       *float64        `json:"value"`       // in Scale; null where nothing was compared, and so are the next five
+	Min         *float64        `json:"min"`         // of the limit, in Scale; null also where there is none
+	Max         *float64        `json:"max"`         // of the limit, in Scale; null also where there is none
+	Guard       *float64        `json:"guard"`       // what the rule asks for between value and limit
+	Expanded    *float64        `json:"expanded"`    // uncertainty of the comparison
+	Probability *float64        `json:"probability"` // of conformity, JCGM 106
+
+	Sentence string   `json:"sentence"` // for a foreman
+	Basis    string   `json:"basis"`    // how the comparison was made, where not in the limit's own scale; else ""
+	Advice   string   `json:"advice"`   // what to do now; "" where there is nothing to do
+	Said     []Saying `json:"said"`     // the three by their codes, those that are not ""
+}
+
+// Saying is a sentence by its code.
+type Saying struct {
+	Part   string         `json:"part"` // "sentence", "basis" or "advice"
+	Code   string         `json:"code"`
+	Params wording.Params `json:"params"`
+}
+
+// say sets one part of the verdict in words.
+func (v *Verdict) say(part, code string, params wording.Params) {
+	text := wording.Say(code, params).Message
+	switch part {
+	case "sentence":
+		v.Sentence = text
+	case "basis":
+		v.Basis = text
+	case "advice":
+		v.Advice = text
+	}
+	v.Said = append(v.Said, Saying{Part: part, Code: code, Params: params})
+}
+
+// conversionOnly are the findings that stop a conversion and leave what was
+// measured standing, so that it may still be set against a limit in its own scale.
+var conversionOnly = []string{"no-curve", "no-metal", "no-table", "outside-metal-range"}
+
+// judge sets the spot against its limit.
+func (e *evaluation) judge() {
+	v := &e.sheet.Verdict
+	v.Outcome, v.Said = verdict.CannotSay, []Saying{}
+	limit := e.record.Limit
+	switch {
+	case limit == nil:
+		v.Outcome = verdict.NoLimit
+		v.say("sentence", "verdict-no-limit", wording.Params{})
+		return
+	case !e.wholeLimit(*limit):
+		v.say("sentence", "verdict-bad-limit", wording.Params{})
+		return
+	case e.summary.N == 0:
+		v.say("sentence", "verdict-no-readings", wording.Params{})
+		return
+	}
+	c, no := e.compare(*limit)
+	if no != nil {
+		v.say("sentence", no.code, no.params)
+		if no.advice != "" {
+			v.say("advice", no.advice, wording.Params{"scale": string(limit.Scale)})
+		}
+		return
+	}
+	e.tell(v, c)
+}
+
+// wholeLimit reports whether a limit can be compared with, and says at its field
+// if not.
+func (e *evaluation) wholeLimit(l verdict.Limit) bool {
+	b := l.Band()
+	for _, bound := range []struct {
+		path  string
+		value *float64
+	}{{"limit.min", l.Min}, {"limit.max", l.Max}} {
+		if v := bound.value; v != nil && !(*v > 0 && *v <= greatestLimit) {
+			e.find("bad-limit", bound.path, wording.Params{"path": bound.path, "got": asTyped(*v), "hi": greatestLimit})
+			return false
+		}
+	}
+	switch {
+	case l.Scale == "":
+		e.find("limit-no-scale", "limit.scale", wording.Params{})
+	case l.Min == nil && l.Max == nil:
+		e.find("limit-empty", "limit", wording.Params{})
+	case b.Min > b.Max:
+		e.find("limit-reversed", "limit.min", wording.Params{"min": b.Min, "max": b.Max})
+	default:
+		return true
+	}
+	return false
+}
+
+// greatestLimit is above every value of every scale served here.
+const greatestLimit = 5000.0
+
+// comparison is a comparison and the scale that it is made in.
+type comparison struct {
+	verdict.Comparison
+	scale   scale.Scale
+	limit   verdict.Limit // as it was written down
+	through bool          // whether the limit was converted to HV
+}
+
+// refusal says why nothing can be compared.
+type refusal struct {
+	code   string
+	params wording.Params
+	advice string // code; "" for none
+}
+
+// compare sets the mean against a limit: in the limit's own scale where the spot
+// has a value in it, else in HV.
+func (e *evaluation) compare(l verdict.Limit) (comparison, *refusal) {
+	s, _ := scale.ByKey(l.Scale)
+	c := comparison{scale: s, limit: l, Comparison: verdict.Comparison{
+		Band: l.Band(), Rule: l.Rule, Value: e.mean, Terms: e.terms, Confidence: e.record.Confidence}}
+	stopped := &refusal{code: "verdict-stopped", advice: "advice-stopped", params: wording.Params{}}
+	if s.Key == e.own.Key {
+		if e.stoppedBut(conversionOnly) || math.IsNaN(e.mean) {
+			return c, stopped
+		}
+		return c, nil
+	}
+	if e.stopped() || math.IsNaN(e.hv) {
+		return c, stopped
+	}
+	leg, ok := e.legTo(s)
+	if !ok {
+		return c, &refusal{code: "verdict-no-way", advice: "advice-direct", params: wording.Params{"scale": string(s.Key), "own": string(e.own.Key)}}
+	}
+	value, terms, outside := e.over(leg)
+	if outside != nil {
+		return e.compareThroughHV(c, leg)
+	}
+	c.Value, c.Terms = value, terms
+	return c, nil
+}
+
+// compareThroughHV sets the mean against a limit in a scale that has no value
+// for the spot: both are led to HV.
+func (e *evaluation) compareThroughHV(c comparison, leg scale.Leg) (comparison, *refusal) {
+	hv, _ := scale.ByKey(scale.HV)
+	toHV, _ := e.legTo(hv)
+	value, terms, outside := e.over(toHV)
+	if outside != nil {
+		panic(outside) // the mean was placed inside the metal's range
+	}
+	c.scale, c.through, c.Value = hv, true, value
+	var doubt stats.Term
+	for _, bound := range []*float64{&c.Band.Min, &c.Band.Max} {
+		if math.IsInf(*bound, 0) {
+			continue
+		}
+		term, no := e.boundInHV(bound, leg)
+		if no != nil {
+			return c, no
+		}
+		if term.Standard*term.Sensitivity > doubt.Standard*doubt.Sensitivity {
+			doubt = term
+		}
+	}
+	c.Terms = append(terms, doubt)
+	return c, nil
+}
+
+// boundInHV converts a bound of the limit to HV, and returns the doubt in it.
+func (e *evaluation) boundInHV(bound *float64, leg scale.Leg) (stats.Term, *refusal) {
+	outside := func() *refusal {
+		lo, hi, _ := leg.Span(e.group.Lo, e.group.Hi)
+		return &refusal{code: "verdict-limit-outside", advice: "advice-direct", params: wording.Params{
+			"limit": leg.Scale.Quote(*bound), "scale": string(leg.Scale.Key), "lo": leg.Scale.QuoteUp(lo), "hi": leg.Scale.QuoteDown(hi)}}
+	}
+	back, err := leg.Back(e.group.Lo, e.group.Hi)
+	if err != nil {
+		return stats.Term{}, outside()
+	}
+	inHV, err := back.At(*bound)
+	if err != nil {
+		return stats.Term{}, outside()
+	}
+	v, err := leg.At(inHV)
+	if err != nil {
+		return stats.Term{}, outside()
+	}
+	*bound = inHV
+	return stats.Term{
+		Name: "limit", Standard: v.Standard, Scale: string(leg.Scale.Key), DoF: stats.Infinite, Distribution: stats.Normal,
+		Sensitivity: 1 / v.Slope, Source: scale.LegSource,
+	}, nil
+}
+
+// tell decides a comparison and puts it in words.
+func (e *evaluation) tell(v *Verdict, c comparison) {
+	d := c.Decide()
+	v.Outcome, v.Rule, v.Scale = d.Outcome, c.Rule, c.scale.Key
+	if v.Rule == "" {
+		v.Rule = verdict.Guarded
+	}
+	v.Value, v.Guard, v.Expanded, v.Probability = &c.Value, &d.Guard, &d.Uncertainty.Expanded, &d.Probability
+	v.Min, v.Max = finite(c.Band.Min), finite(c.Band.Max)
+
+	ruling := string(d.Outcome) + "-" + c.sideOf(d)
+	if v.Rule == verdict.Simple {
+		ruling += "-simple"
+	}
+	v.say("sentence", "verdict-"+ruling, wording.Params{
+		"shown": c.scale.Notation(c.scale.Quote(c.Value), e.own.Key), "scale": string(c.scale.Key),
+		"guard": c.scale.QuoteUp(d.Guard), "min": c.quote(c.Band.Min), "max": c.quote(c.Band.Max),
+	})
+	if c.through {
+		v.say("basis", "verdict-through-hv", wording.Params{
+			"scale": string(c.limit.Scale), "limit": c.quoteLimit(), "hv": c.quoteBand()})
+	}
+	e.advise(v, c, d)
+}
+
+// sideOf names the bounds that an outcome is about: "min", "max" or "both".
+func (c comparison) sideOf(d verdict.Decision) string {
+	low, high := c.Value-d.Guard < c.Band.Min, c.Value+d.Guard > c.Band.Max
+	if d.Outcome == verdict.Conforms {
+		low, high = !math.IsInf(c.Band.Min, 0), !math.IsInf(c.Band.Max, 0)
+	}
+	switch {
+	case low && high:
+		return "both"
+	case low:
+		return "min"
+	}
+	return "max"
+}
+
+// quote writes a bound in the scale of the comparison.
+func (c comparison) quote(bound float64) string {
+	if math.IsInf(bound, 0) {
+		return ""
+	}
+	if c.through {
+		return c.scale.Quote(bound)
+	}
+	return asTyped(bound)
+}
+
+// quoteLimit writes the bounds of the limit as it was written down.
+func (c comparison) quoteLimit() string {
+	var bounds []string
+	for _, bound := range []*float64{c.limit.Min, c.limit.Max} {
+		if bound != nil {
+			bounds = append(bounds, asTyped(*bound))
+		}
+	}
+	return strings.Join(bounds, ", ")
+}
+
+// quoteBand writes the bounds that are compared with.
+func (c comparison) quoteBand() string {
+	bounds := slices.DeleteFunc([]string{c.quote(c.Band.Min), c.quote(c.Band.Max)}, func(s string) bool { return s == "" })
+	return strings.Join(bounds, ", ")
+}
+
+// advise says what to do now.
+func (e *evaluation) advise(v *Verdict, c comparison, d verdict.Decision) {
+	switch d.Outcome {
+	case verdict.Conforms:
+		v.say("advice", "advice-conforms", wording.Params{})
+		return
+	case verdict.DoesNotConform:
+		v.say("advice", "advice-fails", wording.Params{})
+		return
+	}
+	n := e.summary.N
+	wanted := min(math.Abs(c.Value-c.Band.Min), math.Abs(c.Value-c.Band.Max))
+	if enough, _, ok := c.ReadingsFor(wanted, e.scatter(), max(n+1, leastReadings)); ok {
+		v.say("advice", "advice-more-readings", wording.Params{"n": float64(enough), "more": float64(enough - n)})
+		return
+	}
+	largest, percent := largestTerm(d)
+	v.say("advice", "advice-not-readings", wording.Params{"term": largest, "percent": percent})
+}
+
+// largestTerm names the term that carries most of the variance, and its share.
+func largestTerm(d verdict.Decision) (name string, percent float64) {
+	largest := slices.MaxFunc(d.Uncertainty.Terms, func(a, b stats.Term) int {
+		return cmp.Compare(a.Contribution, b.Contribution)
+	})
+	share := largest.Contribution / d.Uncertainty.Standard
+	return largest.Name, share * share * 100
+}
+
+// scatter is the standard deviation of the readings, or the one assumed where
+// they are too few to know it.
+func (e *evaluation) scatter() float64 {
+	return e.repeatability().Standard * math.Sqrt(float64(e.summary.N))
+}
+
+// finite is a bound for JSON, nil where the side is open.
+func finite(bound float64) *float64 {
+	if math.IsInf(bound, 0) {
+		return nil
+	}
+	return &bound
+}
