@@ -40,6 +40,8 @@ type GoNoGo struct {
 const (
 	goNoGoStep = 2.0
 	goNoGoEdge = 0.001
+	// mostCorrection is more than any correction moves a mean.
+	mostCorrection = 60.0
 )
 
 // FindGoNoGo finds, for a limit, the means of the readings that conform and
@@ -91,10 +93,11 @@ func (g *GoNoGo) refuse(code string, params wording.Params) {
 // equal outcome.
 func (g *GoNoGo) scan(e *evaluation, q GoNoGoRequest) {
 	at := func(mean float64) (verdict.Outcome, *refusal) { return e.expect(mean, q.N, q.SD) }
-	from, _ := at(goNoGoStep)
-	begin := goNoGoStep
-	var last *refusal
-	for mean := 2 * goNoGoStep; mean <= record.GreatestReading; mean += goNoGoStep {
+	lo, hi := e.ownRange()
+	begin := max(goNoGoStep, lo-mostCorrection)
+	end := min(record.GreatestReading, hi+mostCorrection)
+	from, last := at(begin)
+	for mean := begin + goNoGoStep; mean <= end; mean += goNoGoStep {
 		outcome, no := at(mean)
 		if no != nil && (last == nil || no.code != "verdict-stopped") {
 			last = no
@@ -105,7 +108,7 @@ func (g *GoNoGo) scan(e *evaluation, q GoNoGoRequest) {
 			from, begin = outcome, above
 		}
 	}
-	g.add(e.own, from, begin, record.GreatestReading)
+	g.add(e.own, from, begin, end)
 	if len(g.Conforms)+len(g.DoesNotConform)+len(g.NotProven) == 0 && last != nil {
 		g.refuse(last.code, last.params)
 	}

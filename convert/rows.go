@@ -142,13 +142,15 @@ func (e *evaluation) over(leg scale.Leg) (value float64, terms []stats.Term, out
 	if errors.As(err, &outside) {
 		return math.NaN(), nil, outside
 	}
-	slope, err := e.first.Slope(e.mean)
-	if err != nil {
-		panic(err) // place has found the mean inside the first leg
-	}
 	terms = append(slices.Clone(e.terms), e.first.terms(e.mean, e.hv)...)
+	u := stats.Combine(terms, e.record.Confidence).Standard
+	toHV, err1 := curve.MeanSlope(e.first, e.mean, u)
+	fromHV, err2 := leg.Carry(e.hv, u*math.Abs(toHV))
+	if err := errors.Join(err1, err2); err != nil {
+		panic(err) // place has found the mean inside the first leg, At inside the second
+	}
 	for i := range terms {
-		terms[i].Sensitivity *= slope * v.Slope
+		terms[i].Sensitivity *= toHV * fromHV
 	}
 	if leg.Scale.Key != scale.HV {
 		terms = append(terms, secondLegTerm(leg, e.hv))
@@ -188,7 +190,7 @@ func (e *evaluation) refuseSide(r *Row, side Status) {
 func (r *Row) accept(s scale.Scale, measured scale.Key, value float64, u stats.Uncertainty) {
 	r.Status = OK
 	r.Value, r.Standard, r.Expanded, r.K = &value, &u.Standard, &u.Expanded, &u.K
-	r.DoF, r.Terms = u.DoF, u.Terms
+	r.DoF, r.Coverage, r.Terms = u.DoF, u.Coverage, u.Terms
 	low, high := value-u.Expanded, value+u.Expanded
 	r.LowCut, r.HighCut = low < r.Range[0], high > r.Range[1]
 	low, high = max(low, r.Range[0]), min(high, r.Range[1])

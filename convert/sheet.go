@@ -106,16 +106,17 @@ type Row struct {
 	Method string    `json:"method"` // the scale with its test force, where one is known: "HBW 10/3000"
 	Status Status    `json:"status"`
 
-	Value    *float64     `json:"value"`    // null unless ok, and so are the next five
-	Standard *float64     `json:"standard"` // standard uncertainty
-	Expanded *float64     `json:"expanded"` // expanded uncertainty
-	K        *float64     `json:"k"`        // coverage factor
-	Low      *float64     `json:"low"`      // value - expanded, but never outside the range
-	High     *float64     `json:"high"`     // value + expanded, but never outside the range
-	DoF      stats.DoF    `json:"dof"`      // effective degrees of freedom; null: infinite
-	Terms    []stats.Term `json:"terms"`    // the budget
-	LowCut   bool         `json:"lowCut"`   // whether low was cut off at the range
-	HighCut  bool         `json:"highCut"`  // whether high was cut off at the range
+	Value    *float64       `json:"value"`    // null unless ok, and so are the next five
+	Standard *float64       `json:"standard"` // standard uncertainty
+	Expanded *float64       `json:"expanded"` // expanded uncertainty
+	K        *float64       `json:"k"`        // coverage factor
+	Low      *float64       `json:"low"`      // value - expanded, but never outside the range
+	High     *float64       `json:"high"`     // value + expanded, but never outside the range
+	DoF      stats.DoF      `json:"dof"`      // effective degrees of freedom; null: infinite
+	Coverage stats.Coverage `json:"coverage"` // where k comes from; "" unless ok
+	Terms    []stats.Term   `json:"terms"`    // the budget
+	LowCut   bool           `json:"lowCut"`   // whether low was cut off at the range
+	HighCut  bool           `json:"highCut"`  // whether high was cut off at the range
 
 	Range    []float64 `json:"range"`    // least and greatest value this device gives on this metal; [] where none
 	Decimals int       `json:"decimals"` // places of a quoted value

@@ -2,10 +2,12 @@ package convert
 
 import (
 	"cmp"
+	"errors"
 	"math"
 	"slices"
 	"strings"
 
+	"strikebook/convert/curve"
 	"strikebook/convert/scale"
 	"strikebook/convert/stats"
 	"strikebook/convert/verdict"
@@ -197,14 +199,15 @@ func (e *evaluation) boundInHV(bound *float64, leg scale.Leg) (stats.Term, *refu
 	if err != nil {
 		return stats.Term{}, outside()
 	}
-	v, err := leg.At(inHV)
-	if err != nil {
+	v, err1 := leg.At(inHV)
+	slope, err2 := curve.MeanSlope(back, *bound, v.Standard)
+	if errors.Join(err1, err2) != nil {
 		return stats.Term{}, outside()
 	}
 	*bound = inHV
 	return stats.Term{
 		Name: "limit", Standard: v.Standard, Scale: string(leg.Scale.Key), DoF: stats.Infinite, Distribution: stats.Normal,
-		Sensitivity: 1 / v.Slope, Source: scale.LegSource,
+		Sensitivity: slope, Source: scale.LegSource,
 	}, nil
 }
 
@@ -298,11 +301,8 @@ func (e *evaluation) advise(v *Verdict, c comparison, d verdict.Decision) {
 
 // largestTerm names the term that carries most of the variance, and its share.
 func largestTerm(d verdict.Decision) (name string, percent float64) {
-	largest := slices.MaxFunc(d.Uncertainty.Terms, func(a, b stats.Term) int {
-		return cmp.Compare(a.Contribution, b.Contribution)
-	})
-	share := largest.Contribution / d.Uncertainty.Standard
-	return largest.Name, share * share * 100
+	largest := slices.MaxFunc(d.Uncertainty.Terms, func(a, b stats.Term) int { return cmp.Compare(a.Share, b.Share) })
+	return largest.Name, largest.Share * 100
 }
 
 // scatter is the standard deviation of the readings, or the one assumed where

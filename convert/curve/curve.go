@@ -200,6 +200,26 @@ func (n Narrowed) Inverse(y float64) (float64, error) {
 	return min(n.hi, max(n.lo, x)), err
 }
 
+// MeanSlope returns the slope of a curve over u to either side of x, as far as
+// its range goes: JCGM 100, 5.1.3, note 2. Between points that were rounded the
+// slope at x alone says more of the rounding than of the curve.
+func MeanSlope(c Curve, x, u float64) (float64, error) {
+	lo, hi := c.Domain()
+	if err := checkInside(x, lo, hi); err != nil {
+		return math.NaN(), err
+	}
+	from, to := max(lo, x-u), min(hi, x+u)
+	if !(to-from > 1e-6*(hi-lo)) { // too narrow for a difference
+		return c.Slope(x)
+	}
+	first, err := c.At(from)
+	if err != nil {
+		return math.NaN(), err
+	}
+	last, err := c.At(to)
+	return (last - first) / (to - from), err
+}
+
 // Values returns the least and the greatest value of a curve.
 func Values(c Curve) (lo, hi float64) {
 	from, to := c.Domain()

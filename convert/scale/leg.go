@@ -42,7 +42,7 @@ type Leg struct {
 // Value is a converted value.
 type Value struct {
 	Value    float64 // in the leg's scale
-	Slope    float64 // its change per HV, to carry an uncertainty of HV
+	Slope    float64 // its change per HV, there
 	Standard float64 // standard uncertainty of the leg alone, in the leg's scale
 }
 
@@ -59,8 +59,15 @@ func (l Leg) At(hv float64) (Value, error) {
 	if err != nil {
 		return Value{}, err
 	}
-	slope = l.gap.steepen(hv, slope)
+	slope = l.gap.steepen(hv, hv, slope)
 	return Value{Value: value, Slope: slope, Standard: l.standard(hv, value, slope)}, nil
+}
+
+// Carry returns the change of the value per HV that carries a standard
+// uncertainty u of hv, in HV, over the leg.
+func (l Leg) Carry(hv, u float64) (float64, error) {
+	slope, err := curve.MeanSlope(l.curve, hv, u)
+	return l.gap.steepen(hv-u, hv+u, slope), err
 }
 
 // Steps says how a value comes about at hv.
@@ -240,12 +247,12 @@ type bridge struct {
 	slope  float64 // the steeper of the two tables' slopes beside the gap
 }
 
-// steepen returns the slope that carries an uncertainty. The tables disagree
-// about the level, so the curve runs flat across the gap to meet both; either
-// table alone says that the metal does not, and a flat slope would make the
-// uncertainty of HV vanish there.
-func (b bridge) steepen(hv, slope float64) float64 {
-	if hv >= b.lo && hv <= b.hi {
+// steepen returns the slope that carries an uncertainty between two hardnesses.
+// The tables disagree about the level, so the curve runs flat across the gap to
+// meet both; either table alone says that the metal does not, and a flat slope
+// would make the uncertainty of HV vanish there.
+func (b bridge) steepen(from, to, slope float64) float64 {
+	if to >= b.lo && from <= b.hi {
 		return max(slope, b.slope)
 	}
 	return slope

@@ -31,6 +31,7 @@ type Term struct {
 	Distribution Distribution `json:"distribution"`
 	Sensitivity  float64      `json:"sensitivity"`  // change of the result per unit of Scale
 	Contribution float64      `json:"contribution"` // to the result's standard uncertainty: |Sensitivity| Standard, set by Combine
+	Share        float64      `json:"share"`        // of the result's variance, 0 to 1, set by Combine
 	Source       string       `json:"source"`       // where it comes from
 }
 
@@ -87,7 +88,10 @@ func Combine(terms []Term, confidence float64) Uncertainty {
 		u.DoF = DoF(variance * variance / welch)
 	}
 	u.K = StudentFactor(confidence, float64(u.DoF))
-	if u.Standard > 0 && !closedFormHolds(terms, variance) {
+	for i, t := range terms {
+		terms[i].Share = t.Contribution * t.Contribution / max(variance, math.SmallestNonzeroFloat64)
+	}
+	if u.Standard > 0 && !closedFormHolds(terms) {
 		u.Coverage = ByTerms
 		u.K = newSum(terms).coverage(confidence, u.K*u.Standard) / u.Standard
 	}
@@ -99,11 +103,10 @@ func Combine(terms []Term, confidence float64) Uncertainty {
 // freedom meets the coverage of the sum within 3 %. It is too small where few
 // readings carry much of the variance, too large where one rectangular term
 // does; the bounds were found by comparison (TestClosedForm).
-func closedFormHolds(terms []Term, variance float64) bool {
+func closedFormHolds(terms []Term) bool {
 	for _, t := range terms {
-		share := t.Contribution * t.Contribution / variance
 		dof := float64(t.DoF)
-		if t.Distribution == Student && share > dof*dof/600 || t.Distribution == Uniform && share > 0.35 {
+		if t.Distribution == Student && t.Share > dof*dof/600 || t.Distribution == Uniform && t.Share > 0.35 {
 			return false
 		}
 	}

@@ -80,7 +80,7 @@ func noteSources(root string) error {
 }
 
 // buildPage returns the built page.
-func buildPage(t *testing.T) built {
+func buildPage(t testing.TB) built {
 	t.Helper()
 	b, err := build()
 	if err != nil {
@@ -97,13 +97,13 @@ type site struct {
 }
 
 // startSite serves the built page until the test ends.
-func startSite(t *testing.T, o serve.Options) *site {
+func startSite(t testing.TB, o serve.Options) *site {
 	t.Helper()
 	return startFolder(t, buildPage(t).dir, o)
 }
 
 // startFolder serves a folder until the test ends.
-func startFolder(t *testing.T, dir string, o serve.Options) *site {
+func startFolder(t testing.TB, dir string, o serve.Options) *site {
 	t.Helper()
 	handler := serve.New(dir, o)
 	server := httptest.NewServer(handler)
@@ -139,7 +139,7 @@ func (d device) inDark() device {
 
 // window is a browser with a fresh profile, and its one page.
 type window struct {
-	t   *testing.T
+	t   testing.TB
 	ctx context.Context
 
 	mu       sync.Mutex
@@ -148,7 +148,7 @@ type window struct {
 }
 
 // open starts a browser that has never been anywhere. It ends with the test.
-func open(t *testing.T, d device) *window {
+func open(t testing.TB, d device) *window {
 	t.Helper()
 	path, err := browser.Find()
 	if err != nil {

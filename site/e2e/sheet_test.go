@@ -29,7 +29,7 @@ const (
 )
 
 // visit opens the page in a fresh profile.
-func visit(t *testing.T, s *site, d device) *window {
+func visit(t testing.TB, s *site, d device) *window {
 	t.Helper()
 	w := open(t, d)
 	w.navigate(s.url)

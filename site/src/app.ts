@@ -5,18 +5,23 @@ import { LitElement, css, html } from "lit";
 import { customElement, state } from "lit/decorators.js";
 import { Core, CoreLost, Refusal } from "./core/client";
 import type * as core from "./gen/contract";
-import { EntryChange, RecordChange } from "./look/events";
+import { EntryChange, PlanChange, RecordChange } from "./look/events";
 import { look } from "./look/look";
 import { register } from "./offline";
-import { add, blank, untouched } from "./sheet/draft";
+import { add, blank, spotOf, untouched, usualPlan } from "./sheet/draft";
 import * as store from "./store";
 import { say, sayCode } from "./words/words";
+import "./sheet/block";
 import "./sheet/cautions";
 import "./sheet/foot";
+import "./sheet/gonogo";
+import "./sheet/limit";
+import "./sheet/piece";
 import "./sheet/readings";
 import "./sheet/result";
 import "./sheet/share";
 import "./sheet/spot";
+import "./sheet/verdict";
 
 @customElement("strike-app")
 export class AppElement extends LitElement {
@@ -111,6 +116,8 @@ export class AppElement extends LitElement {
   @state() private record = blank();
   @state() private entry = "";
   @state() private sheet: core.Sheet | undefined;
+  @state() private goNoGo: core.GoNoGo | undefined;
+  @state() private plan = usualPlan;
   @state() private link = "";
   /** the sheet that the user left for this one: a link's, or a new spot's */
   @state() private aside: { kept: store.Kept; why: "link" | "new" } | undefined;
@@ -122,6 +129,7 @@ export class AppElement extends LitElement {
   @state() private switchNow: (() => void) | undefined;
   @state() private calculation: Core["state"];
   private readonly core = new Core();
+  private asked: { key: string; answer: Promise<core.GoNoGo> } | undefined;
   /** counts the changes, so that an answer that came too late is dropped */
   private change = 0;
 
@@ -133,6 +141,11 @@ export class AppElement extends LitElement {
     this.addEventListener(EntryChange.type, (event) => {
       this.entry = (event as EntryChange).entry;
       void this.save();
+    });
+    this.addEventListener(PlanChange.type, (event) => {
+      this.plan = (event as PlanChange).plan;
+      void this.save();
+      void this.evaluate();
     });
     this.addEventListener("new-spot", () => this.newSpot());
   }
@@ -160,10 +173,15 @@ export class AppElement extends LitElement {
         <div id="notices">${this.notices()}</div>
         <div class="column">
           <strike-spot .record=${this.record}></strike-spot>
+          <strike-piece .record=${this.record} .sheet=${this.sheet}></strike-piece>
+          <strike-block .record=${this.record} .sheet=${this.sheet}></strike-block>
+          <strike-limit .record=${this.record} .sheet=${this.sheet}></strike-limit>
+          ${this.goNoGo ? html`<strike-gonogo .record=${this.record} .answer=${this.goNoGo} .plan=${this.plan}></strike-gonogo>` : ""}
           <strike-readings .record=${this.record} .entry=${this.entry} .sheet=${this.sheet}></strike-readings>
         </div>
         <div class="column">
-          <strike-result .record=${this.record} .sheet=${this.sheet}></strike-result>
+          <strike-verdict .sheet=${this.sheet}></strike-verdict>
+          <strike-result .record=${this.record} .sheet=${this.sheet} .askMore=${this.askMore}></strike-result>
           <strike-share .link=${this.link} .label=${this.record.label ?? ""}></strike-share>
           <strike-cautions></strike-cautions>
         </div>
@@ -214,6 +232,7 @@ export class AppElement extends LitElement {
         const typed = this.change === atStart ? [] : this.record.readings.map(({ value }) => value ?? "");
         this.record = add(kept.record, typed);
         this.entry ||= kept.entry;
+        this.plan = kept.plan ?? usualPlan;
       }
     } catch {
       this.storeFailed = true;
@@ -230,7 +249,7 @@ export class AppElement extends LitElement {
     try {
       const record = await this.core.decodeLink(fragment);
       if (JSON.stringify(record) === JSON.stringify(this.record)) return;
-      const own = { record: this.record, entry: this.entry };
+      const own = this.current();
       if (!untouched(own.record) && !this.aside) {
         this.aside = { kept: own, why: "link" };
         await this.attempt(store.save("aside", own));
@@ -252,7 +271,7 @@ export class AppElement extends LitElement {
   }
 
   private newSpot(): void {
-    const kept = { record: this.record, entry: this.entry };
+    const kept = this.current();
     this.entry = "";
     this.replace(blank(this.record));
     if (!untouched(kept.record)) this.aside = { kept, why: "new" };
@@ -270,8 +289,12 @@ export class AppElement extends LitElement {
     void this.attempt(store.remove("aside"));
   }
 
+  private current(): store.Kept {
+    return { record: this.record, entry: this.entry, plan: this.plan };
+  }
+
   private save(): Promise<void> {
-    return this.attempt(store.save("current", { record: this.record, entry: this.entry }));
+    return this.attempt(store.save("current", this.current()));
   }
 
   private async attempt(work: Promise<void>): Promise<void> {
@@ -286,9 +309,14 @@ export class AppElement extends LitElement {
   private async evaluate(): Promise<void> {
     const { record, change } = this;
     try {
-      const [sheet, fragment] = await Promise.all([this.core.evaluate(record), this.core.encodeLink(record)]);
+      const [sheet, fragment, goNoGo] = await Promise.all([
+        this.core.evaluate(record),
+        this.core.encodeLink(record),
+        this.askGoNoGo(record),
+      ]);
       if (change !== this.change) return; // the user has typed on
       this.sheet = sheet;
+      this.goNoGo = goNoGo;
       this.fault = "";
       this.carry(untouched(record) ? "" : fragment);
     } catch (error) {
@@ -301,6 +329,18 @@ export class AppElement extends LitElement {
       }
     }
   }
+
+  /** What the readings will decide depends on all but them: it is asked for only
+   * when something else has changed. Without a limit there is nothing to decide. */
+  private askGoNoGo(record: core.Record): Promise<core.GoNoGo> | undefined {
+    const request = { ...spotOf(record), ...this.plan };
+    const key = JSON.stringify(request);
+    if (key !== this.asked?.key) this.asked = record.limit ? { key, answer: this.core.goNoGo(request) } : undefined;
+    return this.asked?.answer;
+  }
+
+  private readonly askMore = (wanted: core.Wanted): Promise<core.MoreReadings> =>
+    this.core.moreReadings({ ...this.record, wanted });
 
   /** Puts the record into the address, and its link on the sheet. */
   private carry(fragment: string): void {

@@ -8,6 +8,8 @@ import type * as core from "./gen/contract";
 export interface Kept {
   record: core.Record;
   entry: string;
+  /** the readings that are planned; absent in what older versions kept */
+  plan?: { n: number; sd: number };
 }
 
 type Place = "current" | "aside";

@@ -57,6 +57,14 @@ export class Core extends EventTarget {
     return this.ask("evaluate", JSON.stringify(record)).then(parsed<core.Sheet>);
   }
 
+  goNoGo(request: core.GoNoGoRequest): Promise<core.GoNoGo> {
+    return this.ask("goNoGo", JSON.stringify(request)).then(parsed<core.GoNoGo>);
+  }
+
+  moreReadings(request: core.MoreReadingsRequest): Promise<core.MoreReadings> {
+    return this.ask("moreReadings", JSON.stringify(request)).then(parsed<core.MoreReadings>);
+  }
+
   decodeLink(fragment: string): Promise<core.Record> {
     return this.ask("decodeLink", fragment).then(parsed<core.Record>);
   }

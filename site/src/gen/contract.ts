@@ -370,6 +370,8 @@ export interface Row {
   high: number | null;
   /** effective degrees of freedom; null: infinite */
   dof: DoF;
+  /** where k comes from; "" unless ok */
+  coverage: Coverage;
   /** the budget */
   terms: Term[];
   /** whether low was cut off at the range */
@@ -628,6 +630,8 @@ export interface Term {
   sensitivity: number;
   /** to the result's standard uncertainty: |Sensitivity| Standard, set by Combine */
   contribution: number;
+  /** of the result's variance, 0 to 1, set by Combine */
+  share: number;
   /** where it comes from */
   source: string;
 }

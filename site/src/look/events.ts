@@ -17,3 +17,11 @@ export class EntryChange extends Event {
     super(EntryChange.type, { bubbles: true, composed: true });
   }
 }
+
+/** The user plans other readings: how many, and with what scatter. */
+export class PlanChange extends Event {
+  static readonly type = "plan-change";
+  constructor(readonly plan: { n: number; sd: number }) {
+    super(PlanChange.type, { bubbles: true, composed: true });
+  }
+}

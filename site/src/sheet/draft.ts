@@ -6,13 +6,23 @@ import type * as core from "../gen/contract";
 
 export function blank(like?: core.Record): core.Record {
   // The next spot of a job is measured as the last one was; nothing else is kept.
-  const { device = "D", scale = "HLD", direction = "down", group, job, by, serial } = like ?? {};
-  return { v: catalogue.recordVersion, id: newId(), device, scale, direction, group, job, by, serial, readings: [] };
+  const { device = "D", scale = "HLD", direction = "down", readings, id, label, notes, taken, zone, v, ...setUp } = like ?? {};
+  return { ...setUp, v: catalogue.recordVersion, id: newId(), device, scale, direction, readings: [] };
 }
 
 function newId(): string {
   const letters = crypto.getRandomValues(new Uint8Array(8));
   return Array.from(letters, (n) => (n % 36).toString(36)).join("");
+}
+
+/** The readings that are planned until the user says otherwise: five, with a
+ * scatter that a fair surface gives (common practice, no source). */
+export const usualPlan = { n: 5, sd: 6 };
+
+/** The spot as it is before any reading, without what nothing depends on. */
+export function spotOf(record: core.Record): core.Record {
+  const { id, label, notes, by, job, zone, taken, ...spot } = record;
+  return { ...spot, readings: [] };
 }
 
 /** Whether the user has put anything into a record yet. */
@@ -50,4 +60,16 @@ export function measureWith(record: core.Record, scale: string): core.Record {
 /** Whether three digits make a reading: in a Leeb scale they do. */
 export function flows(record: core.Record): boolean {
   return catalogue.scales.some((scale) => scale.key === record.scale && scale.leeb);
+}
+
+/** Writes a part of the record: what is undefined goes out of it, and a part
+ * with nothing in it goes out of the record. */
+export function setPart<K extends "piece" | "block" | "limit">(
+  record: core.Record,
+  part: K,
+  change: Partial<NonNullable<core.Record[K]>>,
+): core.Record {
+  const next = { ...record[part], ...change };
+  const empty = Object.values(next).every((value) => value === undefined || value === "");
+  return { ...record, [part]: empty ? undefined : next };
 }

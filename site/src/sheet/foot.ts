@@ -36,6 +36,15 @@ export class FootElement extends LitElement {
       b {
         color: var(--stop);
       }
+      .conforms {
+        color: var(--go);
+      }
+      .does-not-conform {
+        color: var(--stop);
+      }
+      .not-proven {
+        color: var(--warn);
+      }
       .stop {
         overflow: hidden;
         display: -webkit-box;
@@ -53,6 +62,7 @@ export class FootElement extends LitElement {
     return html`<div id="glance" role="status" aria-label=${say("result.foot")}>
       <strong>${sheet.readings.shownMean}</strong>
       <span class="soft">n ${sheet.readings.n}</span>
+      ${sheet.verdict.outcome === "no-limit" ? "" : html`<strong id="outcome" class=${sheet.verdict.outcome}>${say(`outcome.${sheet.verdict.outcome}`)}</strong>`}
       ${stop
         ? html`<span class="stop"><b>${say("result.none")}.</b> ${sayFinding(stop).message}</span>`
         : glance

@@ -6,11 +6,14 @@ import { customElement, property } from "lit/decorators.js";
 import type * as core from "../gen/contract";
 import { look } from "../look/look";
 import { say, sayCode, sayFinding } from "../words/words";
+import { budget, budgetStyle } from "./budget";
+import "./more";
 
 @customElement("strike-result")
 export class ResultElement extends LitElement {
   static override styles = [
     look,
+    budgetStyle,
     css`
       ul {
         margin: 0;
@@ -70,36 +73,18 @@ export class ResultElement extends LitElement {
       .not {
         margin-top: 0.4rem;
       }
-      .scroll {
-        overflow-x: auto;
-      }
-      table {
-        width: 100%;
-        border-collapse: collapse;
-        font-size: 0.85rem;
-      }
-      caption {
-        text-align: left;
-        font-weight: 600;
-      }
-      th,
-      td {
-        padding: 0.25rem 0.5rem 0.25rem 0;
-        text-align: left;
-        vertical-align: top;
-        border-top: 1px solid var(--line);
-      }
     `,
   ];
   @property({ attribute: false }) record!: core.Record;
   @property({ attribute: false }) sheet: core.Sheet | undefined;
+  @property({ attribute: false }) askMore!: (wanted: core.Wanted) => Promise<core.MoreReadings>;
 
   override render() {
     const sheet = this.sheet;
     const nothing = !sheet || this.record.readings.length === 0;
     return html`<section aria-labelledby="title">
       <h2 id="title">${say("result.title")}</h2>
-      ${nothing ? html`<p>${say("result.empty")}</p>` : html`${findings(sheet)}${summary(sheet, this.record)}${scales(sheet)}`}
+      ${nothing ? html`<p>${say("result.empty")}</p>` : html`${findings(sheet)}${summary(sheet, this.record)}${scales(sheet)}<strike-more .sheet=${sheet} .ask=${this.askMore}></strike-more>`}
     </section>`;
   }
 }
@@ -167,35 +152,10 @@ function scale(row: core.Row) {
           (step) => html`<li><b>${step.step}</b>, ${say(`basis.${step.basis}`)}. <span class="soft">${step.source}</span></li>`,
         )}
       </ul>
-      <p class="soft">${say("scale.factor", { k: row.k! })}</p>
+      <p class="soft">${say(`scale.factor.${row.coverage}`, { k: row.k!, dof: row.dof ?? "∞" })}</p>
       ${budget(row)}
     </details>
   </li>`;
-}
-
-function budget(row: core.Row) {
-  return html`<div class="scroll" tabindex="0" role="region" aria-label=${say("scale.budget", { scale: row.scale })}>
-    <table>
-      <thead>
-        <tr>
-          <th scope="col">${say("budget.term")}</th>
-          <th scope="col">${say("budget.standard")}</th>
-          <th scope="col">${say("budget.share", { scale: row.scale })}</th>
-          <th scope="col">${say("budget.source")}</th>
-        </tr>
-      </thead>
-      <tbody>
-        ${row.terms.map(
-          (term) => html`<tr>
-            <th scope="row">${say(`term.${term.name}`)}</th>
-            <td>${say("budget.figure", { value: term.standard })} ${term.scale}</td>
-            <td>${say("budget.figure", { value: term.contribution })}</td>
-            <td>${term.source}</td>
-          </tr>`,
-        )}
-      </tbody>
-    </table>
-  </div>`;
 }
 
 function range(row: core.Row): string {
