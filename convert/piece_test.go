@@ -222,7 +222,7 @@ func TestFindingsMeetTheList(t *testing.T) {
 func FuzzPiece(f *testing.F) {
 	nan, inf := math.NaN(), math.Inf(1)
 	f.Add(uint8(0), uint8(0), uint8(0), uint16(0), 3.0, 20.0, 25.0, 1.6, 21.0, 0.5, 3.0, 5.0, 100.0, 50.0, 60.0, 5.0)
-	f.Add(uint8(7), uint8(3), uint8(2), uint16(0xffff), nan, inf, -inf, 0.0, -300.0, -0.0, 1e308, 5e-324, 1e308, 1e308, 1e308, 1e308)
+	f.Add(uint8(7), uint8(3), uint8(2), uint16(0xffff), nan, inf, -inf, 0.0, -300.0, math.Copysign(0, -1), 1e308, 5e-324, 1e308, 1e308, 1e308, 1e308)
 	f.Add(uint8(1), uint8(2), uint8(2), uint16(0xfff0), 4.9999999, 24.9999999, 29.9999999, 2.0000001, 38.0000001, 0.79999999, 2.99999999, 4.99999999, 1e7, 1e7, 1e7, 5e6)
 	f.Fuzz(func(t *testing.T, deviceIndex, support, kind uint8, stated uint16,
 		mass, thickness, radius, ra, temperature, depth, spacing, edge, length, width, diameter, wall float64) {

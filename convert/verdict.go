@@ -5,6 +5,7 @@ import (
 	"errors"
 	"math"
 	"slices"
+	"strconv"
 	"strings"
 
 	"strikebook/convert/curve"
@@ -25,6 +26,7 @@ type Verdict struct {
 	Guard       *float64        `json:"guard"`       // what the rule asks for between value and limit
 	Expanded    *float64        `json:"expanded"`    // uncertainty of the comparison
 	Probability *float64        `json:"probability"` // of conformity, JCGM 106
+	ShownChance string          `json:"shownChance"` // the probability in percent, never 0 and never 100: "97", "> 99"; "" where there is none
 
 	Sentence string   `json:"sentence"` // for a foreman
 	Basis    string   `json:"basis"`    // how the comparison was made, where not in the limit's own scale; else ""
@@ -219,6 +221,7 @@ func (e *evaluation) tell(v *Verdict, c comparison) {
 		v.Rule = verdict.Guarded
 	}
 	v.Value, v.Guard, v.Expanded, v.Probability = &c.Value, &d.Guard, &d.Uncertainty.Expanded, &d.Probability
+	v.ShownChance = shownChance(d.Probability)
 	v.Min, v.Max = finite(c.Band.Min), finite(c.Band.Max)
 
 	ruling := string(d.Outcome) + "-" + c.sideOf(d)
@@ -234,6 +237,18 @@ func (e *evaluation) tell(v *Verdict, c comparison) {
 			"scale": string(c.limit.Scale), "limit": c.quoteLimit(), "hv": c.quoteBand()})
 	}
 	e.advise(v, c, d)
+}
+
+// shownChance writes a probability in percent. Nothing is certain.
+func shownChance(p float64) string {
+	switch percent := math.Round(p * 100); percent {
+	case 0:
+		return "< 1"
+	case 100:
+		return "> 99"
+	default:
+		return strconv.FormatFloat(percent, 'f', 0, 64)
+	}
 }
 
 // sideOf names the bounds that an outcome is about: "min", "max" or "both".

@@ -436,6 +436,8 @@ export interface Verdict {
   expanded: number | null;
   /** of conformity, JCGM 106 */
   probability: number | null;
+  /** the probability in percent, never 0 and never 100: "97", "> 99"; "" where there is none */
+  shownChance: string;
   /** for a foreman */
   sentence: string;
   /** how the comparison was made, where not in the limit's own scale; else "" */

@@ -31,12 +31,17 @@ export class QuantityElement extends LitElement {
         color: var(--soft);
         pointer-events: none;
       }
-      input {
+      .unit input {
         padding-right: 3.6rem;
+      }
+      input {
         font-variant-numeric: tabular-nums;
       }
       input[aria-invalid="true"] {
         border: 2px solid var(--stop);
+      }
+      p:empty {
+        display: none;
       }
       p {
         color: var(--stop);
@@ -61,7 +66,7 @@ export class QuantityElement extends LitElement {
     const problem = noNumber ? say("field.no-number", { text: this.text }) : this.problem;
     return html`<label
         >${this.label}
-        <div>
+        <div class=${this.unit ? "unit" : ""}>
           <input
             inputmode="decimal"
             autocomplete="off"

@@ -1,6 +1,6 @@
 // The limit that the spot has to meet.
 
-import { LitElement, html } from "lit";
+import { LitElement, css, html } from "lit";
 import { customElement, property } from "lit/decorators.js";
 import { catalogue } from "../gen/catalogue";
 import type * as core from "../gen/contract";
@@ -15,7 +15,18 @@ import { anyProblem, problemAt } from "./problems";
 
 @customElement("strike-limit")
 export class LimitElement extends LitElement {
-  static override styles = [look, foldStyle];
+  static override styles = [
+    look,
+    foldStyle,
+    css`
+      .triple {
+        display: grid;
+        grid-template-columns: 1fr 1fr 1fr;
+        gap: 0 0.5rem;
+        align-items: start;
+      }
+    `,
+  ];
   @property({ attribute: false }) record!: core.Record;
   @property({ attribute: false }) sheet: core.Sheet | undefined;
 
@@ -36,7 +47,7 @@ export class LimitElement extends LitElement {
           </select>
         </label>
         ${picked ? html`<p class="soft" id="limit-source">${picked.source}</p>` : ""}
-        <div class="pair">
+        <div class="triple">
           <label
             >${say("limit.scale")}
             <select id="scale" @change=${(e: Event) => this.change({ scale: (e.target as HTMLSelectElement).value })}>
@@ -70,7 +81,6 @@ export class LimitElement extends LitElement {
     return html`<strike-quantity
       id=${name}
       .label=${say(`limit.${name}`)}
-      .unit=${this.record.limit?.scale ?? ""}
       .value=${this.record.limit?.[name]}
       .problem=${problemAt(this.sheet, `limit.${name}`)}
       @quantity-change=${(e: QuantityChange) => this.change({ [name]: e.value })}

@@ -84,7 +84,7 @@ export class VerdictElement extends LitElement {
       ${verdict.probability === null
         ? ""
         : html`<p class="soft" id="probability">
-            ${say("verdict.probability", { percent: verdict.probability * 100 })} ${say(`rule.${verdict.rule}`)}.
+            ${say("verdict.probability", { percent: verdict.shownChance })} ${say(`rule.${verdict.rule}`)}.
           </p>`}
     </section>`;
   }

@@ -158,7 +158,7 @@ const own = {
   "outcome.does-not-conform": "Does not conform",
   "outcome.not-proven": "Not proven",
   "outcome.cannot-say": "No verdict",
-  "verdict.probability": "Probability that the spot conforms: {percent:0} %. Rule:",
+  "verdict.probability": "Probability that the spot conforms: {percent} %. Rule:",
 
   "gonogo.title": "Go/no-go readings for {limit}",
   "gonogo.span": "Mean {lo} to {hi} {scale}",
