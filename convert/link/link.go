@@ -45,18 +45,8 @@ func Encode(r record.Record) (string, error) {
 		return "", err
 	}
 	packed := binary.BigEndian.AppendUint32(nil, crc32.ChecksumIEEE(text))
-	b := bytes.NewBuffer(packed)
-	w, err := flate.NewWriterDict(b, flate.BestCompression, []byte(dictionary))
-	if err != nil {
-		return "", err
-	}
-	if _, err := w.Write(text); err != nil {
-		return "", err
-	}
-	if err := w.Close(); err != nil {
-		return "", err
-	}
-	return mark + strconv.Itoa(version) + "." + base64.RawURLEncoding.EncodeToString(b.Bytes()), nil
+	packed = append(packed, deflate(text, []byte(dictionary))...)
+	return mark + strconv.Itoa(version) + "." + base64.RawURLEncoding.EncodeToString(packed), nil
 }
 
 // Decode reads the record out of a fragment, with or without its "#". An error
