@@ -2,6 +2,7 @@ package stats
 
 import (
 	"math"
+	"slices"
 	"strconv"
 )
 
@@ -104,13 +105,18 @@ func Combine(terms []Term, confidence float64) Uncertainty {
 // readings carry much of the variance, too large where one rectangular term
 // does; the bounds were found by comparison (TestClosedForm).
 func closedFormHolds(terms []Term) bool {
-	for _, t := range terms {
-		dof := float64(t.DoF)
-		if t.Distribution == Student && t.Share > dof*dof/600 || t.Distribution == Uniform && t.Share > 0.35 {
-			return false
-		}
+	return !slices.ContainsFunc(terms, func(t Term) bool {
+		return t.tail() > 1 || t.Distribution == Uniform && t.Share > 0.35
+	})
+}
+
+// tail is how much the sum feels that the term is heavier in its tails than a
+// normal one: above 1, by more than 3 % of its coverage.
+func (t Term) tail() float64 {
+	if t.Distribution != Student {
+		return 0
 	}
-	return true
+	return 600 * t.Share / float64(t.DoF*t.DoF)
 }
 
 // Rectangular returns the standard uncertainty of a value that lies anywhere

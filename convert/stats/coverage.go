@@ -73,13 +73,13 @@ func (s sum) coverage(confidence, guess float64) float64 {
 	return x
 }
 
-// newSum splits terms, whose contributions are set, into the three.
+// newSum splits terms, whose contributions and shares are set, into the three.
 func newSum(terms []Term) sum {
 	var s sum
 	student, rectangle := -1, -1
 	for i, t := range terms {
 		switch {
-		case t.Distribution == Student && (student < 0 || t.Contribution > terms[student].Contribution):
+		case t.tail() > 0.3 && (student < 0 || t.Contribution > terms[student].Contribution):
 			student = i
 		case t.Distribution == Uniform && (rectangle < 0 || t.Contribution > terms[rectangle].Contribution):
 			rectangle = i
