@@ -84,16 +84,18 @@ export class ResultElement extends LitElement {
     const nothing = !sheet || this.record.readings.length === 0;
     return html`<section aria-labelledby="title">
       <h2 id="title">${say("result.title")}</h2>
-      ${nothing ? html`<p>${say("result.empty")}</p>` : html`${findings(sheet)}${summary(sheet, this.record)}${scales(sheet)}<strike-more .sheet=${sheet} .ask=${this.askMore}></strike-more>`}
+      ${nothing ? html`<p>${say("result.empty")}</p>` : html`${findings(sheet, ["stop", "warn"])}${summary(sheet, this.record)}${scales(sheet)}${findings(sheet, ["note"])}<strike-more .sheet=${sheet} .ask=${this.askMore}></strike-more>`}
     </section>`;
   }
 }
 
-function findings(sheet: core.Sheet) {
-  if (sheet.findings.length === 0) return "";
-  return html`<h3 class="hidden">${say("findings.title")}</h3>
-    <ul id="findings">
-      ${sheet.findings.map((finding) => {
+/** The findings of some levels, the gravest first. */
+function findings(sheet: core.Sheet, levels: string[]) {
+  const found = levels.flatMap((level) => sheet.findings.filter((finding) => finding.level === level));
+  if (found.length === 0) return "";
+  return html`<h3 class="hidden">${say(`findings.${levels[0]!}`)}</h3>
+    <ul class="findings">
+      ${found.map((finding) => {
         const { message, remedy } = sayFinding(finding);
         return html`<li class="finding ${finding.level}" data-code=${finding.code}>
           <b>${say(`level.${finding.level}`)}.</b> ${message} ${remedy}

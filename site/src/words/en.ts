@@ -233,7 +233,8 @@ const own = {
   "basis.standard": "Published conversion",
   "basis.similar": "Similarity",
 
-  "findings.title": "Findings",
+  "findings.stop": "Findings",
+  "findings.note": "Notes",
   "level.stop": "Stop",
   "level.warn": "Warning",
   "level.note": "Note",
