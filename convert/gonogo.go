@@ -2,6 +2,7 @@ package convert
 
 import (
 	"math"
+	"slices"
 
 	"strikebook/convert/record"
 	"strikebook/convert/scale"
@@ -89,37 +90,53 @@ func (g *GoNoGo) refuse(code string, params wording.Params) {
 	g.Reason, g.ReasonCode, g.ReasonParams = wording.Say(code, params).Message, code, params
 }
 
+// trial is what a mean of the readings comes to.
+type trial struct {
+	mean    float64
+	outcome verdict.Outcome
+	offset  float64 // of the value from the middle of the limit; infinite or NaN where it has none
+	no      *refusal
+}
+
 // scan goes over the means that readings can have and collects the spans of
 // equal outcome.
 func (g *GoNoGo) scan(e *evaluation, q GoNoGoRequest) {
-	at := func(mean float64) (verdict.Outcome, *refusal) { return e.expect(mean, q.N, q.SD) }
+	at := func(mean float64) trial { return e.expect(mean, q.N, q.SD) }
 	lo, hi := e.ownRange()
-	begin := max(goNoGoStep, lo-mostCorrection)
+	first := at(max(goNoGoStep, lo-mostCorrection))
 	end := min(record.GreatestReading, hi+mostCorrection)
-	from, last := at(begin)
-	for mean := begin + goNoGoStep; mean <= end; mean += goNoGoStep {
-		outcome, no := at(mean)
-		if no != nil && (last == nil || no.code != "verdict-stopped") {
-			last = no
+	begin, last, why := first.mean, first, first.no
+	step := func(next trial) {
+		if next.no != nil && (why == nil || next.no.code != "verdict-stopped") {
+			why = next.no
 		}
-		if outcome != from {
-			below, above := edge(at, from, mean-goNoGoStep, mean)
-			g.add(e.own, from, begin, below)
-			from, begin = outcome, above
+		if next.outcome != last.outcome {
+			below, above := edge(at, last, next, func(t trial) bool { return t.outcome == last.outcome })
+			g.add(e.own, last.outcome, begin, below.mean)
+			begin = above.mean
 		}
+		last = next
 	}
-	g.add(e.own, from, begin, end)
-	if len(g.Conforms)+len(g.DoesNotConform)+len(g.NotProven) == 0 && last != nil {
-		g.refuse(last.code, last.params)
+	for mean := first.mean + goNoGoStep; mean <= end; mean += goNoGoStep {
+		next := at(mean)
+		// A narrow limit may be crossed within one step.
+		if last.offset < 0 && next.offset > 0 {
+			middle, _ := edge(at, last, next, func(t trial) bool { return t.offset < 0 })
+			step(middle)
+		}
+		step(next)
+	}
+	g.add(e.own, last.outcome, begin, end)
+	if len(g.Conforms)+len(g.DoesNotConform)+len(g.NotProven) == 0 && why != nil {
+		g.refuse(why.code, why.params)
 	}
 }
 
-// edge halves the distance between a mean of the outcome from and one of
-// another, until they are as good as one.
-func edge(at func(float64) (verdict.Outcome, *refusal), from verdict.Outcome, lo, hi float64) (below, above float64) {
-	for hi-lo > goNoGoEdge {
-		middle := (lo + hi) / 2
-		if outcome, _ := at(middle); outcome == from {
+// edge halves the distance between a mean that is still of a kind and one that
+// is not, until they are as good as one.
+func edge(at func(float64) trial, lo, hi trial, still func(trial) bool) (below, above trial) {
+	for hi.mean-lo.mean > goNoGoEdge {
+		if middle := at((lo.mean + hi.mean) / 2); still(middle) {
 			lo = middle
 		} else {
 			hi = middle
@@ -129,34 +146,44 @@ func edge(at func(float64) (verdict.Outcome, *refusal), from verdict.Outcome, lo
 }
 
 // add adds a span. Of two spans that conform, which only the seam between two
-// ways of comparing can part, the wider one stands.
+// ways of comparing can part, the wider one stands, and the other counts as not
+// proven.
 func (g *GoNoGo) add(s scale.Scale, outcome verdict.Outcome, lo, hi float64) {
 	span := []float64{lo, hi}
-	shown := []string{s.QuoteUp(lo), s.QuoteDown(hi)}
 	switch outcome {
 	case verdict.Conforms:
-		if len(g.Conforms) == 0 || hi-lo > g.Conforms[1]-g.Conforms[0] {
-			g.Conforms, g.ShownConforms = span, shown
+		if len(g.Conforms) > 0 && hi-lo <= g.Conforms[1]-g.Conforms[0] {
+			g.NotProven = append(g.NotProven, span)
+			return
 		}
+		if len(g.Conforms) > 0 {
+			g.NotProven = append(g.NotProven, g.Conforms)
+		}
+		g.Conforms, g.ShownConforms = span, []string{s.QuoteUp(lo), s.QuoteDown(hi)}
 	case verdict.DoesNotConform:
 		g.DoesNotConform = append(g.DoesNotConform, span)
-		g.ShownDoesNotConform = append(g.ShownDoesNotConform, shown)
+		g.ShownDoesNotConform = append(g.ShownDoesNotConform, []string{s.QuoteUp(lo), s.QuoteDown(hi)})
 	case verdict.NotProven:
 		g.NotProven = append(g.NotProven, span)
 	}
 }
 
-// expect is the outcome that n readings of a mean and a standard deviation
-// would have, for an evaluation that has been prepared.
-func (e *evaluation) expect(mean float64, n int, sd float64) (verdict.Outcome, *refusal) {
-	trial := *e
-	trial.terms = append([]stats.Term(nil), e.terms...)
-	trial.sheet.Findings = append([]Finding(nil), e.sheet.Findings...)
-	trial.summary = stats.Summary{N: n, Mean: mean, SD: sd, StandardError: sd / math.Sqrt(float64(n))}
-	trial.locate()
-	c, no := trial.compare(*e.record.Limit)
-	if no != nil {
-		return verdict.CannotSay, no
+// expect is what n readings of a mean and a standard deviation would come to,
+// for an evaluation that has been prepared.
+func (e *evaluation) expect(mean float64, n int, sd float64) trial {
+	other := *e
+	other.terms = slices.Clone(e.terms)
+	other.sheet.Findings = slices.Clone(e.sheet.Findings)
+	other.summary = stats.Summary{N: n, Mean: mean, SD: sd}
+	if n == 1 {
+		other.summary.SD = math.NaN() // one reading has no scatter to be known by
 	}
-	return c.Decide().Outcome, nil
+	other.locate()
+	t := trial{mean: mean, outcome: verdict.CannotSay, offset: math.NaN()}
+	c, no := other.compare(*e.record.Limit)
+	if t.no = no; no == nil {
+		t.outcome = c.Decide().Outcome
+		t.offset = c.Value - (c.Band.Min+c.Band.Max)/2
+	}
+	return t
 }

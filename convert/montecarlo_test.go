@@ -241,9 +241,18 @@ func joined(leg scale.Leg, from, to float64) bool {
 	return source(from) != source(to) || strings.Contains(source((from+to)/2), "join")
 }
 
+// within is what the expanded uncertainty may be off by, down and up. At the end
+// of a curve the sheet's slope and the draws that leave the curve are both
+// guesses; across the join of two tables the sheet keeps the steeper slope on
+// purpose, so that it is the wider one.
+var within = map[place]struct{ down, up float64 }{
+	inside: {0.03, 0.03},
+	atEnd:  {0.08, 0.08},
+	atJoin: {0.03, 0.30},
+}
+
 // The expanded uncertainty of whole sheets against draws, JCGM 101.
 func TestSheetsAgainstDraws(t *testing.T) {
-	const gross = 0.30 // what the sheet is never off by; the table says where it is by more than 3 %
 	type key struct {
 		group string
 		scale scale.Key
@@ -258,7 +267,7 @@ func TestSheetsAgainstDraws(t *testing.T) {
 			if math.Abs(out.difference) >= math.Abs(worst[k].difference) {
 				worst[k] = out
 			}
-			if math.Abs(out.difference) > gross {
+			if bound := within[out.place]; out.difference < -bound.down || out.difference > bound.up {
 				t.Errorf("%+v", out)
 			}
 		}

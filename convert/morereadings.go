@@ -81,7 +81,7 @@ func (e *evaluation) moreReadings(s scale.Scale, wanted float64) MoreReadings {
 	if !ok {
 		largest, percent := largestTerm(c.Decide())
 		m.say("more-never", wording.Params{
-			"scale": string(s.Key), "most": float64(verdict.MostReadings), "best": s.QuoteUp(best),
+			"scale": string(s.Key), "most": float64(max(n, verdict.MostReadings)), "best": s.QuoteUp(best),
 			"term": largest, "percent": math.Round(percent)})
 		return m
 	}

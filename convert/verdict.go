@@ -191,7 +191,7 @@ func (e *evaluation) boundInHV(bound *float64, leg scale.Leg) (stats.Term, *refu
 	outside := func() *refusal {
 		lo, hi, _ := leg.Span(e.group.Lo, e.group.Hi)
 		return &refusal{code: "verdict-limit-outside", advice: "advice-direct", params: wording.Params{
-			"limit": leg.Scale.Quote(*bound), "scale": string(leg.Scale.Key), "lo": leg.Scale.QuoteUp(lo), "hi": leg.Scale.QuoteDown(hi)}}
+			"limit": asTyped(*bound), "scale": string(leg.Scale.Key), "lo": leg.Scale.QuoteUp(lo), "hi": leg.Scale.QuoteDown(hi)}}
 	}
 	back, err := leg.Back(e.group.Lo, e.group.Hi)
 	if err != nil {
@@ -228,13 +228,13 @@ func (e *evaluation) tell(v *Verdict, c comparison) {
 	if v.Rule == verdict.Simple {
 		ruling += "-simple"
 	}
+	value, guard := c.quoteValue(d)
 	v.say("sentence", "verdict-"+ruling, wording.Params{
-		"shown": c.scale.Notation(c.scale.Quote(c.Value), e.own.Key), "scale": string(c.scale.Key),
-		"guard": c.scale.QuoteUp(d.Guard), "min": c.quote(c.Band.Min), "max": c.quote(c.Band.Max),
+		"shown": c.scale.Notation(value, e.own.Key), "guard": guard, "min": c.quote(c.Band.Min), "max": c.quote(c.Band.Max),
 	})
 	if c.through {
 		v.say("basis", "verdict-through-hv", wording.Params{
-			"scale": string(c.limit.Scale), "limit": c.quoteLimit(), "hv": c.quoteBand()})
+			"scale": string(c.limit.Scale), "limit": c.quoteLimit(), "hv": listBounds(c.quote(c.Band.Min), c.quote(c.Band.Max))})
 	}
 	e.advise(v, c, d)
 }
@@ -266,32 +266,49 @@ func (c comparison) sideOf(d verdict.Decision) string {
 	return "max"
 }
 
-// quote writes a bound in the scale of the comparison.
+// quoteValue writes the value and its guard with so many places that a reader
+// who adds them up comes to the same outcome.
+func (c comparison) quoteValue(d verdict.Decision) (value, guard string) {
+	const mostFiner = 3
+	s := c.scale
+	for range mostFiner {
+		value, guard = s.Quote(c.Value), s.QuoteUp(d.Guard)
+		v, err1 := strconv.ParseFloat(value, 64)
+		g, err2 := strconv.ParseFloat(guard, 64)
+		if err := errors.Join(err1, err2); err != nil {
+			panic(err) // Quote writes numbers
+		}
+		if c.Band.Outcome(v, g) == d.Outcome {
+			break
+		}
+		s = s.Finer()
+	}
+	return value, guard
+}
+
+// quote writes a bound of the comparison with its scale; "" for an open side.
 func (c comparison) quote(bound float64) string {
-	if math.IsInf(bound, 0) {
+	switch {
+	case math.IsInf(bound, 0):
 		return ""
+	case c.through:
+		return c.scale.Notation(c.scale.Quote(bound), c.scale.Key)
 	}
-	if c.through {
-		return c.scale.Quote(bound)
-	}
-	return asTyped(bound)
+	return c.scale.Notation(asTyped(bound), c.scale.Key)
 }
 
 // quoteLimit writes the bounds of the limit as it was written down.
 func (c comparison) quoteLimit() string {
-	var bounds []string
-	for _, bound := range []*float64{c.limit.Min, c.limit.Max} {
-		if bound != nil {
-			bounds = append(bounds, asTyped(*bound))
-		}
-	}
-	return strings.Join(bounds, ", ")
+	written := c
+	written.through = false
+	written.scale, _ = scale.ByKey(c.limit.Scale)
+	b := c.limit.Band()
+	return listBounds(written.quote(b.Min), written.quote(b.Max))
 }
 
-// quoteBand writes the bounds that are compared with.
-func (c comparison) quoteBand() string {
-	bounds := slices.DeleteFunc([]string{c.quote(c.Band.Min), c.quote(c.Band.Max)}, func(s string) bool { return s == "" })
-	return strings.Join(bounds, ", ")
+// listBounds joins the bounds that there are.
+func listBounds(bounds ...string) string {
+	return strings.Join(slices.DeleteFunc(bounds, func(s string) bool { return s == "" }), ", ")
 }
 
 // advise says what to do now.

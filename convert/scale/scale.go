@@ -118,6 +118,14 @@ func (s Scale) QuoteUp(value float64) string { return s.format(math.Ceil(s.steps
 // QuoteDown is Quote rounded down, for lower bounds.
 func (s Scale) QuoteDown(value float64) string { return s.format(math.Floor(s.steps(value))) }
 
+// Finer is the scale with one more place, for where the usual ones would hide
+// what a sentence is about.
+func (s Scale) Finer() Scale {
+	s.Decimals++
+	s.Step /= 10
+	return s
+}
+
 // steps is a value in steps of the scale, free of the last bits' noise, which
 // must not push a value that stands on a step to the next one.
 func (s Scale) steps(value float64) float64 {

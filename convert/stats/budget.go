@@ -2,7 +2,6 @@ package stats
 
 import (
 	"math"
-	"slices"
 	"strconv"
 )
 
@@ -105,13 +104,31 @@ func Combine(terms []Term, confidence float64) Uncertainty {
 // readings carry much of the variance, too large where one rectangular term
 // does; the bounds were found by comparison (TestClosedForm).
 func closedFormHolds(terms []Term) bool {
-	return !slices.ContainsFunc(terms, func(t Term) bool {
-		return t.tail() > 1 || t.Distribution == Uniform && t.Share > 0.35
-	})
+	tails := 0.0
+	for _, t := range terms {
+		if t.Distribution == Uniform && t.Share > 0.35 {
+			return false
+		}
+		tails += t.tail() * (1 - t.Share) // alone, it is the sum, and Student's factor its own
+	}
+	return tails <= 1
 }
 
-// tail is how much the sum feels that the term is heavier in its tails than a
-// normal one: above 1, by more than 3 % of its coverage.
+// CDF is the probability that the result is too large by no more than x, from
+// the distribution that K comes from.
+func (u Uncertainty) CDF(x float64) float64 {
+	if math.IsInf(x, 0) {
+		return max(0, math.Copysign(1, x))
+	}
+	if u.Coverage == ByTerms {
+		p, _ := newSum(u.Terms).cdf(x)
+		return p
+	}
+	return StudentCDF(x/u.Standard, float64(u.DoF))
+}
+
+// tail is how much a sum feels that a small term of it is heavier in its tails
+// than a normal one: above 1, by more than 3 % of its coverage.
 func (t Term) tail() float64 {
 	if t.Distribution != Student {
 		return 0

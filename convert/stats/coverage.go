@@ -17,17 +17,14 @@ const (
 )
 
 // sum is the distribution of a sum of independent terms about its mean: one
-// Student's, one rectangular, and the rest, which is taken as normal.
+// that is rectangular, and a mixture of normal ones, which the rest makes.
 type sum struct {
-	normal  float64 // standard deviation of the rest
-	half    float64 // half-width of the rectangular one; 0 for none
-	student float64 // scale of Student's; 0 for none
-	dof     float64 // its degrees of freedom
-	nodes   []node  // the mixture of normal ones that Student's and the rest make
+	half  float64 // half-width of the rectangular one; 0 for none
+	nodes []node
 }
 
 // node is one normal distribution of a mixture.
-type node struct{ weight, sd float64 }
+type node struct{ weight, variance, sd float64 }
 
 // cdf is the probability of a deviation up to x, and its density there.
 func (s sum) cdf(x float64) (p, density float64) {
@@ -73,58 +70,53 @@ func (s sum) coverage(confidence, guess float64) float64 {
 	return x
 }
 
-// newSum splits terms, whose contributions and shares are set, into the three.
+// newSum adds up terms whose contributions and shares are set.
 func newSum(terms []Term) sum {
-	var s sum
-	student, rectangle := -1, -1
+	rectangle := -1
 	for i, t := range terms {
-		switch {
-		case t.tail() > 0.3 && (student < 0 || t.Contribution > terms[student].Contribution):
-			student = i
-		case t.Distribution == Uniform && (rectangle < 0 || t.Contribution > terms[rectangle].Contribution):
+		// A tiny one is as good as normal, and would only cost digits.
+		if t.Distribution == Uniform && t.Share > 1e-4 && (rectangle < 0 || t.Contribution > terms[rectangle].Contribution) {
 			rectangle = i
 		}
 	}
-	variance := 0.0
+	s := sum{nodes: []node{{weight: 1}}}
+	normal := 0.0
 	for i, t := range terms {
-		switch i {
-		case student:
-			s.student, s.dof = t.Contribution, float64(t.DoF)
-		case rectangle:
+		switch {
+		case i == rectangle:
 			s.half = t.Contribution * math.Sqrt(3)
+		case t.tail() > 0.1:
+			s.mix(t.Contribution, float64(t.DoF))
 		default:
-			variance += t.Contribution * t.Contribution
+			normal += t.Contribution * t.Contribution
 		}
 	}
-	s.normal = math.Sqrt(variance)
-	s.nodes = s.mixture()
+	for i := range s.nodes {
+		s.nodes[i].sd = math.Sqrt(s.nodes[i].variance + normal)
+	}
 	return s
 }
 
-// mixture writes Student's distribution plus the normal rest as a mixture of
-// normal ones: Student's is normal with the variance student^2/g, where g is a
-// chi-square of dof degrees over dof. The nodes stand evenly in ln g, over
-// which the trapezoidal rule converges faster than any power of their distance.
-func (s sum) mixture() []node {
-	if s.student == 0 {
-		return []node{{1, s.normal}}
-	}
-	const step = 0.5
-	density := func(u float64) float64 { return math.Exp(s.dof / 2 * (u - math.Exp(u) + 1)) }
-	var nodes []node
+// mix adds Student's distribution of a scale to the mixture. It is itself one:
+// normal with the variance scale^2/g, where g is a chi-square of dof degrees
+// over dof. The nodes stand evenly in ln g, over which the trapezoidal rule
+// converges faster than any power of their distance.
+func (s *sum) mix(scale, dof float64) {
+	step := 0.6 * math.Sqrt(2/dof) // in widths of ln g
+	density := func(u float64) float64 { return math.Exp(dof / 2 * (u - math.Exp(u) + 1)) }
+	var parts []node
 	total := 0.0
 	for _, direction := range []float64{-step, step} {
-		for u := min(direction, 0); ; u += direction {
-			w := density(u)
-			if w < 1e-9 {
-				break
-			}
-			total += w
-			nodes = append(nodes, node{w, math.Sqrt(s.normal*s.normal + s.student*s.student*math.Exp(-u))})
+		for u := min(direction, 0); density(u) > 1e-8; u += direction {
+			parts = append(parts, node{weight: density(u), variance: scale * scale * math.Exp(-u)})
+			total += density(u)
 		}
 	}
-	for i := range nodes {
-		nodes[i].weight /= total
+	mixed := make([]node, 0, len(s.nodes)*len(parts))
+	for _, a := range s.nodes {
+		for _, b := range parts {
+			mixed = append(mixed, node{weight: a.weight * b.weight / total, variance: a.variance + b.variance})
+		}
 	}
-	return nodes
+	s.nodes = mixed
 }

@@ -71,6 +71,9 @@ func StudentCDF(t, dof float64) float64 {
 	if math.IsInf(dof, 1) {
 		return distuv.UnitNormal.CDF(t)
 	}
+	if dof > 1e5 { // where the library loses digits; Abramowitz and Stegun, 26.7.8, from memory
+		return distuv.UnitNormal.CDF(t * (1 - 1/(4*dof)) / math.Sqrt(1+t*t/(2*dof)))
+	}
 	return distuv.StudentsT{Mu: 0, Sigma: 1, Nu: dof}.CDF(t)
 }
 

@@ -79,11 +79,8 @@ type Decision struct {
 func (c Comparison) Decide() Decision {
 	u := stats.Combine(c.Terms, c.Confidence)
 	d := Decision{Guard: c.guard(u), Uncertainty: u}
-	d.Outcome = c.Band.outcome(c.Value, d.Guard)
-	cdf := func(limit float64) float64 {
-		return stats.StudentCDF((limit-c.Value)/u.Standard, float64(u.DoF))
-	}
-	d.Probability = cdf(c.Band.Max) - cdf(c.Band.Min)
+	d.Outcome = c.Band.Outcome(c.Value, d.Guard)
+	d.Probability = min(1, max(0, u.CDF(c.Band.Max-c.Value)-u.CDF(c.Band.Min-c.Value)))
 	return d
 }
 
@@ -99,8 +96,8 @@ func (c Comparison) guard(u stats.Uncertainty) float64 {
 	return u.Expanded
 }
 
-// outcome sets a value with a guard on either side against the band.
-func (b Band) outcome(value, guard float64) Outcome {
+// Outcome sets a value with a guard on either side against the band.
+func (b Band) Outcome(value, guard float64) Outcome {
 	switch {
 	case value-guard >= b.Min && value+guard <= b.Max:
 		return Conforms
@@ -119,6 +116,7 @@ const MostReadings = 30
 // that is at least from. ok is false where no number up to MostReadings would
 // do; best is then the guard that so many would reach.
 func (c Comparison) ReadingsFor(wanted, sd float64, from int) (n int, best float64, ok bool) {
+	best = c.Decide().Guard
 	for n = from; n <= MostReadings; n++ {
 		best = c.withReadings(n, sd).Decide().Guard
 		if best <= wanted {

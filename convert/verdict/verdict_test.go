@@ -65,11 +65,11 @@ func TestOutcomeAtTheEdges(t *testing.T) {
 		{"nothing bounds", Band{-inf, inf}, g, 3, Conforms},
 	} {
 		t.Run(c.name, func(t *testing.T) {
-			if got := c.band.outcome(c.value, c.guard); got != c.want {
+			if got := c.band.Outcome(c.value, c.guard); got != c.want {
 				t.Errorf("%g with a guard of %g in %+v: %s, want %s", c.value, c.guard, c.band, got, c.want)
 			}
 			mirrored := Band{-c.band.Max, -c.band.Min}
-			if got := mirrored.outcome(-c.value, c.guard); got != c.want {
+			if got := mirrored.Outcome(-c.value, c.guard); got != c.want {
 				t.Errorf("mirrored: %s, want %s", got, c.want)
 			}
 		})
