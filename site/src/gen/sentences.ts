@@ -328,98 +328,98 @@ export const sentences: Sentence[] = [
   {
     "code": "verdict-conforms-max",
     "kind": "ruling",
-    "message": "It conforms: {shown} ± {guard} lies wholly at or below {max} {scale}.",
+    "message": "It conforms: {shown} ± {guard} lies wholly at or below {max}.",
     "remedy": "",
     "source": ""
   },
   {
     "code": "verdict-conforms-min",
     "kind": "ruling",
-    "message": "It conforms: {shown} ± {guard} lies wholly at or above {min} {scale}.",
+    "message": "It conforms: {shown} ± {guard} lies wholly at or above {min}.",
     "remedy": "",
     "source": ""
   },
   {
     "code": "verdict-conforms-both",
     "kind": "ruling",
-    "message": "It conforms: {shown} ± {guard} lies wholly within {min} to {max} {scale}.",
+    "message": "It conforms: {shown} ± {guard} lies wholly within {min} to {max}.",
     "remedy": "",
     "source": ""
   },
   {
     "code": "verdict-does-not-conform-max",
     "kind": "ruling",
-    "message": "It does not conform: even less {guard}, {shown} lies above {max} {scale}.",
+    "message": "It does not conform: even less {guard}, {shown} lies above {max}.",
     "remedy": "",
     "source": ""
   },
   {
     "code": "verdict-does-not-conform-min",
     "kind": "ruling",
-    "message": "It does not conform: even with {guard} more, {shown} lies below {min} {scale}.",
+    "message": "It does not conform: even with {guard} more, {shown} lies below {min}.",
     "remedy": "",
     "source": ""
   },
   {
     "code": "verdict-not-proven-max",
     "kind": "ruling",
-    "message": "Not proven either way: {shown} ± {guard} reaches across {max} {scale}.",
+    "message": "Not proven either way: {shown} ± {guard} reaches across {max}.",
     "remedy": "",
     "source": ""
   },
   {
     "code": "verdict-not-proven-min",
     "kind": "ruling",
-    "message": "Not proven either way: {shown} ± {guard} reaches across {min} {scale}.",
+    "message": "Not proven either way: {shown} ± {guard} reaches across {min}.",
     "remedy": "",
     "source": ""
   },
   {
     "code": "verdict-not-proven-both",
     "kind": "ruling",
-    "message": "Not proven either way: {shown} ± {guard} reaches across both {min} and {max} {scale}.",
+    "message": "Not proven either way: {shown} ± {guard} reaches across both {min} and {max}.",
     "remedy": "",
     "source": ""
   },
   {
     "code": "verdict-conforms-max-simple",
     "kind": "ruling",
-    "message": "By its mean alone it conforms: {shown} is at or below {max} {scale}. Its uncertainty is left out of account.",
+    "message": "By its mean alone it conforms: {shown} is at or below {max}. Its uncertainty is left out of account.",
     "remedy": "",
     "source": ""
   },
   {
     "code": "verdict-conforms-min-simple",
     "kind": "ruling",
-    "message": "By its mean alone it conforms: {shown} is at or above {min} {scale}. Its uncertainty is left out of account.",
+    "message": "By its mean alone it conforms: {shown} is at or above {min}. Its uncertainty is left out of account.",
     "remedy": "",
     "source": ""
   },
   {
     "code": "verdict-conforms-both-simple",
     "kind": "ruling",
-    "message": "By its mean alone it conforms: {shown} is within {min} to {max} {scale}. Its uncertainty is left out of account.",
+    "message": "By its mean alone it conforms: {shown} is within {min} to {max}. Its uncertainty is left out of account.",
     "remedy": "",
     "source": ""
   },
   {
     "code": "verdict-does-not-conform-max-simple",
     "kind": "ruling",
-    "message": "By its mean alone it does not conform: {shown} is above {max} {scale}. Its uncertainty is left out of account.",
+    "message": "By its mean alone it does not conform: {shown} is above {max}. Its uncertainty is left out of account.",
     "remedy": "",
     "source": ""
   },
   {
     "code": "verdict-does-not-conform-min-simple",
     "kind": "ruling",
-    "message": "By its mean alone it does not conform: {shown} is below {min} {scale}. Its uncertainty is left out of account.",
+    "message": "By its mean alone it does not conform: {shown} is below {min}. Its uncertainty is left out of account.",
     "remedy": "",
     "source": ""
   },
   {
     "code": "verdict-through-hv",
     "kind": "ruling",
-    "message": "The spot has no valid value in {scale}, so the comparison is made in HV: {limit} {scale} answers to {hv} HV.",
+    "message": "The spot has no valid value in {scale}, so the comparison is made in HV: {limit} answers to {hv}.",
     "remedy": "",
     "source": ""
   },
