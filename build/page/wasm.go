@@ -5,6 +5,7 @@ import (
 	"fmt"
 	"os"
 	"path/filepath"
+	"slices"
 
 	"strikebook/build/command"
 )
@@ -41,11 +42,23 @@ func compileWasm(ctx context.Context, root, pkg string) ([]byte, error) {
 	out := filepath.Join(dir, "main.wasm")
 	_, err = command.Command{
 		Dir:  root,
-		Env:  WasmEnv,
+		Env:  append(slices.Clone(WasmEnv), "GOEXPERIMENT="+smallerRuntime(ctx, root)),
 		Args: []string{"go", "build", "-trimpath", "-buildvcs=false", "-gcflags=all=-l", "-ldflags=-s -w -buildid=", "-o", out, pkg},
 	}.Run(ctx)
 	if err != nil {
 		return nil, err
 	}
 	return os.ReadFile(out)
+}
+
+// smallerRuntime names the experiment of Go that leaves out its newer garbage
+// collector, which is made for many processors and large heaps: a hundredth of
+// what has to be loaded. It is "" with a Go that does not know it.
+func smallerRuntime(ctx context.Context, root string) string {
+	const older = "nogreenteagc"
+	known := command.Command{Dir: root, Env: []string{"GOEXPERIMENT=" + older}, Args: []string{"go", "env", "GOEXPERIMENT"}}
+	if _, err := known.Run(ctx); err != nil {
+		return ""
+	}
+	return older
 }
