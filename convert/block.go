@@ -164,7 +164,7 @@ func (e *evaluation) budgetWithoutBlock() {
 	case half == nil:
 		e.find("no-block-check-direct", "block", wording.Params{"scale": string(e.own.Key)})
 		return
-	case e.record.Block == nil:
+	case e.record.Block == nil && !e.offsetInCurve():
 		e.find("no-block-check", "block", wording.Params{"half": *half, "scale": string(e.own.Key)})
 	}
 	e.addTerms(stats.Term{

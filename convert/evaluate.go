@@ -12,6 +12,7 @@ import (
 
 	"strikebook/convert/curve"
 	"strikebook/convert/device"
+	"strikebook/convert/edition"
 	"strikebook/convert/metal"
 	"strikebook/convert/record"
 	"strikebook/convert/scale"
@@ -20,7 +21,7 @@ import (
 )
 
 // Edition names the data and methods. It changes whenever a sheet could.
-const Edition = "2026.1"
+const Edition = edition.Current
 
 // ISO 16859-1, from memory: check your edition.
 const (
@@ -35,13 +36,7 @@ func Evaluate(r record.Record) (Sheet, error) {
 	if err := r.Validate(); err != nil {
 		return Sheet{}, err
 	}
-	e := newEvaluation(r.Normalized())
-	e.prepare()
-	e.summarize()
-	e.locate()
-	e.convert()
-	e.judge()
-	return e.sheet, nil
+	return newEvaluation(r.Normalized()).run(), nil
 }
 
 // evaluation is a sheet in the making.
@@ -59,6 +54,13 @@ type evaluation struct {
 	side  Status      // where the mean lies: OK inside the ranges of device and metal
 	hv    float64     // what the mean stands for; NaN where there is none
 
+	curve  *ownLeg // of the user's own; nil where there is none that may be used
+	value  float64 // what the mean stands for by it, in the scale that it leads to
+	placed bool    // whether the mean lies inside the first leg
+
+	inLimit *stats.Uncertainty // of the value in the limit's scale, once the rows are written
+
+	brief bool // only what a row of a book shows: no sentences, and no more scales than it has
 	sheet Sheet
 }
 
@@ -80,8 +82,22 @@ func newEvaluation(r record.Record) *evaluation {
 	return e
 }
 
+// run evaluates a record from beginning to end.
+func (e *evaluation) run() Sheet {
+	e.prepare()
+	e.summarize()
+	e.locate()
+	e.convert()
+	e.judge()
+	return e.sheet
+}
+
 // find adds a finding.
 func (e *evaluation) find(code, field string, params wording.Params) {
+	if e.brief {
+		e.sheet.Findings = append(e.sheet.Findings, Finding{Code: code, Level: wording.KindOf(code)})
+		return
+	}
 	s := wording.Say(code, params)
 	e.sheet.Findings = append(e.sheet.Findings, Finding{
 		Code: code, Level: s.Kind, Field: field, Message: s.Message, Remedy: s.Remedy, Params: params, Source: s.Source,
@@ -92,9 +108,11 @@ func (e *evaluation) find(code, field string, params wording.Params) {
 func (e *evaluation) stopped() bool { return e.stoppedBut(nil) }
 
 // stoppedBut is stopped for other findings than these.
-func (e *evaluation) stoppedBut(codes []string) bool {
-	return slices.ContainsFunc(e.sheet.Findings, func(f Finding) bool {
-		return f.Level == wording.Stop && !slices.Contains(codes, f.Code)
+func (e *evaluation) stoppedBut(codes []string) bool { return stoppedIn(e.sheet.Findings, codes) }
+
+func stoppedIn(findings []Finding, but []string) bool {
+	return slices.ContainsFunc(findings, func(f Finding) bool {
+		return f.Level == wording.Stop && !slices.Contains(but, f.Code)
 	})
 }
 
@@ -102,6 +120,7 @@ func (e *evaluation) stoppedBut(codes []string) bool {
 // be tested, what the instrument is worth, and what leads from reading to HV.
 func (e *evaluation) prepare() {
 	e.checkPiece()
+	e.findOwnCurve()
 	e.checkBlock()
 	if e.own.Key == "" {
 		e.find("no-device", "device", wording.Params{})
@@ -290,7 +309,11 @@ func (e *evaluation) place() {
 		e.findOutside(&curve.OutsideError{Value: e.mean, Lo: lo, Hi: hi})
 		return
 	}
-	if e.first == nil {
+	switch {
+	case e.first == nil:
+		return
+	case e.curve != nil:
+		e.placeByOwnCurve()
 		return
 	}
 	hv, err := e.first.At(e.mean)
@@ -299,7 +322,7 @@ func (e *evaluation) place() {
 		e.findOutside(outside)
 		return
 	}
-	e.hv = hv
+	e.hv, e.placed = hv, true
 }
 
 // ownRange is the range of the scale the readings are in. Where the scale has

@@ -12,11 +12,11 @@ import (
 
 // firstLeg leads from the readings to HV.
 type firstLeg struct {
-	curve.Curve // from the reading's scale to HV
-	// steps says how hv comes about.
+	curve.Curve // from the reading's scale to HV, or to the scale of a curve of the user's own
+	// steps says how hv comes about; not set for a curve of the user's own.
 	steps func(hv float64) []scale.Step
 	// terms is the leg's own uncertainty, in the reading's scale, at a reading
-	// that stands for hv.
+	// that stands for hv; not set for a curve of the user's own.
 	terms func(reading, hv float64) []stats.Term
 }
 
@@ -24,6 +24,8 @@ type firstLeg struct {
 // nothing does, it adds the finding that says so and answers nil.
 func (e *evaluation) findFirstLeg() *firstLeg {
 	switch {
+	case e.record.Curve != nil:
+		return e.byOwnCurve()
 	case e.own.Leeb:
 		return e.byModel()
 	case e.own.Key == scale.HV:

@@ -17,8 +17,10 @@ func (e *evaluation) checkPiece() {
 		MassKg: number(m.Mass.Value), MassComputed: m.MassComputed,
 		ThicknessMm: number(m.Thickness.Value), RadiusMm: number(m.Radius.Value),
 	}
-	for _, d := range device.All() {
-		e.sheet.Devices = append(e.sheet.Devices, fitOf(d, m))
+	if !e.brief {
+		for _, d := range device.All() {
+			e.sheet.Devices = append(e.sheet.Devices, fitOf(d, m))
+		}
 	}
 	for _, bad := range p.BadQuantities() {
 		e.find("bad-quantity", bad.Field, wording.Params{

@@ -14,6 +14,10 @@ import (
 // convert writes the rows of the sheet: the reading's own scale, then every
 // scale readings can be converted to, with a value or the reason for none.
 func (e *evaluation) convert() {
+	if e.brief {
+		e.convertForBook()
+		return
+	}
 	e.sheet.Uncertainty = e.combineReading()
 	if e.own.Key != "" {
 		e.addRow(e.ownRow())
@@ -25,6 +29,21 @@ func (e *evaluation) convert() {
 	}
 }
 
+// convertForBook writes the rows that a book shows.
+func (e *evaluation) convertForBook() {
+	wanted, otherwise := bookScales(e.record)
+	for _, key := range wanted {
+		if s, _ := scale.ByKey(key); key == e.own.Key {
+			e.addRow(e.ownRow())
+		} else if !s.Leeb {
+			e.addRow(e.convertedRow(s))
+		}
+	}
+	if otherwise != "" && !slices.ContainsFunc(e.sheet.Scales, func(r Row) bool { return r.Status == OK }) {
+		e.addRow(e.ownRow())
+	}
+}
+
 func (e *evaluation) addRow(r Row) { e.sheet.Scales = append(e.sheet.Scales, r) }
 
 // combineReading is the uncertainty of the mean as a measure of hardness: the
@@ -33,8 +52,11 @@ func (e *evaluation) combineReading() *stats.Uncertainty {
 	if e.summary.N == 0 {
 		return nil
 	}
-	terms := slices.Clone(e.terms)
-	if !math.IsNaN(e.hv) {
+	terms := e.leading()
+	switch {
+	case e.placed && e.curve != nil:
+		terms = append(terms, e.ownCurveTerm())
+	case e.placed:
 		terms = append(terms, e.first.terms(e.mean, e.hv)...)
 	}
 	u := stats.Combine(terms, e.record.Confidence)
@@ -48,6 +70,7 @@ func (e *evaluation) ownRow() Row {
 	lo, hi := e.ownRange()
 	if e.first != nil {
 		lo, hi = e.first.Domain()
+		lo, hi = lo+e.carried(), hi+e.carried()
 	}
 	r.setRange(e.own, lo, hi)
 	switch {
@@ -59,7 +82,7 @@ func (e *evaluation) ownRow() Row {
 		r.refuse(None, "scale-withheld", nil)
 	default:
 		r.Path = []scale.Step{measuredStep(e.own.Key)}
-		r.accept(e.own, e.own.Key, e.mean, stats.Combine(e.terms, e.record.Confidence))
+		r.accept(e.own, e.own.Key, e.mean, e.combine(e.own.Key, e.terms))
 	}
 	return r
 }
@@ -77,6 +100,9 @@ func (e *evaluation) convertedRow(s scale.Scale) Row {
 		return r
 	}
 	r.Method = leg.Method
+	if e.curve != nil && s.Key == e.curve.served {
+		r.Method = string(s.Key) // with whatever force the user measured
+	}
 	lo, hi, ok := e.reach(leg)
 	if !ok {
 		r.refuse(None, "scale-outside", wording.Params{"scale": string(s.Key)})
@@ -88,7 +114,7 @@ func (e *evaluation) convertedRow(s scale.Scale) Row {
 		r.refuse(None, "scale-no-readings", nil)
 	case e.side != OK:
 		e.refuseSide(&r, e.side)
-	case e.stopped() || math.IsNaN(e.hv):
+	case e.stopped() || !e.placed:
 		r.refuse(None, "scale-withheld", nil)
 	default:
 		e.fill(&r, leg)
@@ -115,6 +141,9 @@ func (e *evaluation) legTo(s scale.Scale) (scale.Leg, bool) {
 // lead to over a leg. ok is false where it leads to none.
 func (e *evaluation) reach(leg scale.Leg) (lo, hi float64, ok bool) {
 	from, to := e.group.Lo, e.group.Hi
+	if e.curve != nil {
+		return e.curve.ownReach(leg)
+	}
 	if e.first != nil {
 		from, to = curve.Values(e.first)
 	}
@@ -128,22 +157,41 @@ func (e *evaluation) fill(r *Row, leg scale.Leg) {
 		e.refuseSide(r, sideOf(err.Above()))
 		return
 	}
-	r.Path = e.first.steps(e.hv)
-	if leg.Scale.Key != scale.HV {
-		r.Path = append(r.Path, leg.Steps(e.hv)...)
+	if e.curve != nil {
+		r.Path = e.ownPath(leg)
+	} else {
+		r.Path = e.first.steps(e.hv)
+		if leg.Scale.Key != scale.HV {
+			r.Path = append(r.Path, leg.Steps(e.hv)...)
+		}
 	}
-	r.accept(leg.Scale, e.own.Key, value, stats.Combine(terms, e.record.Confidence))
+	r.accept(leg.Scale, e.own.Key, value, e.combine(leg.Scale.Key, terms))
+}
+
+// combine combines the terms of the value in a scale, and keeps what comes out:
+// the verdict needs it again.
+func (e *evaluation) combine(key scale.Key, terms []stats.Term) stats.Uncertainty {
+	u := stats.Combine(terms, e.record.Confidence)
+	if l := e.record.Limit; l != nil && l.Scale == key {
+		e.inLimit = &u
+	}
+	return u
 }
 
 // over leads from the mean, which has been placed, over a leg: to its value and
 // all that makes it uncertain.
 func (e *evaluation) over(leg scale.Leg) (value float64, terms []stats.Term, outside *curve.OutsideError) {
+	if e.curve != nil {
+		return e.overOwnCurve(leg)
+	}
 	v, err := leg.At(e.hv)
 	if errors.As(err, &outside) {
 		return math.NaN(), nil, outside
 	}
-	terms = append(slices.Clone(e.terms), e.first.terms(e.mean, e.hv)...)
-	u := stats.Combine(terms, e.record.Confidence).Standard
+	const legs = 2 // terms that they add
+	terms = append(make([]stats.Term, 0, len(e.terms)+legs), e.terms...)
+	terms = append(terms, e.first.terms(e.mean, e.hv)...)
+	u := stats.CombineStandard(terms)
 	toHV, err1 := curve.MeanSlope(e.first, e.mean, u)
 	fromHV, err2 := leg.Carry(e.hv, u*math.Abs(toHV))
 	if err := errors.Join(err1, err2); err != nil {

@@ -57,7 +57,10 @@ func (v *Verdict) say(part, code string, params wording.Params) {
 
 // conversionOnly are the findings that stop a conversion and leave what was
 // measured standing, so that it may still be set against a limit in its own scale.
-var conversionOnly = []string{"no-curve", "no-metal", "no-table", "outside-metal-range"}
+var conversionOnly = []string{
+	"no-curve", "no-metal", "no-table", "outside-metal-range",
+	"wrong-curve", "curve-unusable", "curve-altered", "outside-curve-range",
+}
 
 // judge sets the spot against its limit.
 func (e *evaluation) judge() {
@@ -144,7 +147,7 @@ func (e *evaluation) compare(l verdict.Limit) (comparison, *refusal) {
 		}
 		return c, nil
 	}
-	if e.stopped() || math.IsNaN(e.hv) {
+	if e.stopped() || !e.placed {
 		return c, stopped
 	}
 	leg, ok := e.legTo(s)
@@ -165,8 +168,8 @@ func (e *evaluation) compareThroughHV(c comparison, leg scale.Leg) (comparison, 
 	hv, _ := scale.ByKey(scale.HV)
 	toHV, _ := e.legTo(hv)
 	value, terms, outside := e.over(toHV)
-	if outside != nil {
-		panic(outside) // the mean was placed inside the metal's range
+	if outside != nil { // an own curve can lead beyond the metal's range
+		return c, &refusal{code: "verdict-no-way", advice: "advice-direct", params: wording.Params{"scale": string(c.scale.Key), "own": string(e.own.Key)}}
 	}
 	c.scale, c.through, c.Value = hv, true, value
 	var doubt stats.Term
@@ -215,7 +218,7 @@ func (e *evaluation) boundInHV(bound *float64, leg scale.Leg) (stats.Term, *refu
 
 // tell decides a comparison and puts it in words.
 func (e *evaluation) tell(v *Verdict, c comparison) {
-	d := c.Decide()
+	d := e.decide(c)
 	v.Outcome, v.Rule, v.Scale = d.Outcome, c.Rule, c.scale.Key
 	if v.Rule == "" {
 		v.Rule = verdict.Guarded
@@ -223,7 +226,9 @@ func (e *evaluation) tell(v *Verdict, c comparison) {
 	v.Value, v.Guard, v.Expanded, v.Probability = &c.Value, &d.Guard, &d.Uncertainty.Expanded, &d.Probability
 	v.ShownChance = shownChance(d.Probability)
 	v.Min, v.Max = finite(c.Band.Min), finite(c.Band.Max)
-
+	if e.brief {
+		return
+	}
 	ruling := string(d.Outcome) + "-" + c.sideOf(d)
 	if v.Rule == verdict.Simple {
 		ruling += "-simple"
@@ -237,6 +242,15 @@ func (e *evaluation) tell(v *Verdict, c comparison) {
 			"scale": string(c.limit.Scale), "limit": c.quoteLimit(), "hv": listBounds(c.quote(c.Band.Min), c.quote(c.Band.Max))})
 	}
 	e.advise(v, c, d)
+}
+
+// decide decides a comparison, with the uncertainty that the row of the limit's
+// scale has where it is made there.
+func (e *evaluation) decide(c comparison) verdict.Decision {
+	if e.inLimit != nil && !c.through {
+		return c.DecideWith(*e.inLimit)
+	}
+	return c.Decide()
 }
 
 // shownChance writes a probability in percent. Nothing is certain.

@@ -8,6 +8,7 @@ import (
 
 	"strikebook/convert"
 	"strikebook/convert/link"
+	"strikebook/convert/owncurve"
 	"strikebook/convert/record"
 	"strikebook/convert/strict"
 	"strikebook/convert/wording"
@@ -24,9 +25,14 @@ var doors = map[string]door{
 	"evaluate":     {"the JSON of a record, as text", evaluate},
 	"goNoGo":       {"the JSON of a record with n and sd, as text", goNoGo},
 	"moreReadings": {"the JSON of a record with what is wanted, as text", moreReadings},
+	"fitCurve":     {"the JSON of pairs with their device, metal and scale, as text", fitCurve},
 	"encodeLink":   {"the JSON of a record, as text", encodeLink},
 	"decodeLink":   {"the fragment of a link, as text", decodeLink},
 	"catalogue":    {"", catalogue},
+
+	"evaluateBook":  {"the JSON of a book, as text", evaluateBook},
+	"evaluateRows":  {"the JSON of a book, as text", evaluateRows},
+	"summarizeRows": {"the JSON of a book's rows, as text", summarizeRows},
 }
 
 func evaluate(text string) (string, error) {
@@ -63,6 +69,18 @@ func moreReadings(text string) (string, error) {
 		return "", err
 	}
 	return marshal(answer)
+}
+
+func fitCurve(text string) (string, error) {
+	d, err := owncurve.Decode([]byte(text))
+	if err != nil {
+		return "", err
+	}
+	fitted, err := owncurve.Make(d)
+	if err != nil {
+		return "", err
+	}
+	return marshal(fitted)
 }
 
 func encodeLink(text string) (string, error) {

@@ -190,7 +190,7 @@ func TestRefusals(t *testing.T) {
 		{"evaluate", `{"v":2,"spots":[]}`, "record-version", "v"},
 		{"evaluate", `{"v":1,"readings":[{"value":612},{"hl":608}]}`, "unknown-field", "readings[1].hl"},
 		{"evaluate", `{"v":1,"device":"Q","readings":[]}`, "unknown-choice", "device"},
-		{"evaluate", `{"v":1,"curve":{"name":"own"}}`, "curve-not-served", "curve"},
+		{"evaluate", `{"v":1,"curve":{"device":"D","group":"titanium","scale":"HRC","kind":"own"}}`, "curve-scale", "curve.scale"},
 		{"evaluate", strings.Repeat(" ", record.MaxBytes) + pivot, "record-too-large", ""},
 		{"encodeLink", `{"v":1 "label":""}`, "record-not-json", ""},
 		{"encodeLink", `{"v":1,"taken":"today"}`, "not-a-time", "taken"},

@@ -152,15 +152,25 @@ func (w *writer) field(t *typeDecl, f *ast.Field, name string, options []string)
 	return field{name, doc, typ, optional}, err
 }
 
-// embedded lists the fields that an embedded struct brings in.
+// embedded lists the fields that an embedded struct brings in. Those of an
+// embedded pointer may all be missing.
 func (w *writer) embedded(t *typeDecl, f *ast.Field) ([]field, error) {
-	inner, err := w.lookUp(t, f.Type)
+	expr := f.Type
+	star, pointer := expr.(*ast.StarExpr)
+	if pointer {
+		expr = star.X
+	}
+	inner, err := w.lookUp(t, expr)
 	if err != nil {
 		return nil, err
 	}
 	if inner != nil && inner.custom == "" && inner.given == "" {
 		if s, ok := inner.expr.(*ast.StructType); ok {
-			return w.fields(inner, s)
+			fields, err := w.fields(inner, s)
+			for i := range fields {
+				fields[i].optional = fields[i].optional || pointer
+			}
+			return fields, err
 		}
 	}
 	return nil, t.file.errorf(f.Pos(), "only a plain struct may be embedded in %s; give the field a name", t)

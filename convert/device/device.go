@@ -161,9 +161,10 @@ func CorrectionSource() string { return directionTable.Source }
 // CorrectionRange returns the least and the greatest mean for which the
 // standard tabulates a direction correction.
 func CorrectionRange() (lo, hi float64) {
-	levels, _ := directionTable.Pairs("level", correctionColumns[Level])
-	return levels[0], levels[len(levels)-1]
+	return correctedLevels[0], correctedLevels[len(correctedLevels)-1]
 }
+
+var correctedLevels, _ = directionTable.Pairs("level", correctionColumns[Level])
 
 // NeedsCorrection reports whether readings taken in a direction differ from
 // readings taken vertically down.

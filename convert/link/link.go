@@ -38,8 +38,10 @@ const dictionary = `"limit":{"scale":"HRB","min":,"rule":"one-sided-95","rule":"
 	`"confidence":0.95}"notes":"","zone":"base","zone":"haz","zone":"weld","zone":"other","serial":"","by":"","job":"",` +
 	`{"v":1,"id":"","label":"","taken":"2026-12-01T09:30:00Z","device":"D","direction":"down","scale":"HLD","group":"low-alloy-steel","readings":[{"value":612},{"value":655},{"value":6`
 
-// Encode returns the fragment of a record, without "#".
+// Encode returns the fragment of a record, without "#". What came of an own curve
+// is left out: whoever opens the link computes it again.
 func Encode(r record.Record) (string, error) {
+	r.Curve = r.Curve.Packed()
 	text, err := record.Encode(r)
 	if err != nil {
 		return "", err
@@ -66,7 +68,9 @@ func Decode(fragment string) (record.Record, error) {
 	if !ok {
 		return record.Record{}, wording.NewError("link-damaged", "", nil)
 	}
-	return record.Decode(text)
+	r, err := record.Decode(text)
+	r.Curve = r.Curve.Unpacked()
+	return r, err
 }
 
 // unpack returns the JSON of a fragment's payload, and whether it is whole.

@@ -306,7 +306,7 @@ func TestRefused(t *testing.T) {
 		{"no JSON", packedText("{"), "record-not-json"},
 		{"JSON and more", packedText(string(plain) + "{}"), "record-not-json"},
 		{"a record of another version", packedText(`{"v":2,"pieces":[]}`), "record-version"},
-		{"a record with a curve", packedText(`{"v":1,"readings":[],"curve":{"name":"own"}}`), "curve-not-served"},
+		{"half a curve", packedText(`{"v":1,"readings":[],"curve":{"device":"D","group":"brass","scale":"HBW","pairs":[]}}`), "pairs-none"},
 		{"an unknown field", packedText(`{"v":1,"readings":[],"colour":"red"}`), "unknown-field"},
 		{"an unknown device", packedText(`{"v":1,"device":"Q","readings":[]}`), "unknown-choice"},
 	} {

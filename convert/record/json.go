@@ -39,11 +39,13 @@ func (n *Number) UnmarshalJSON(data []byte) error {
 	case 'n':
 		text = ""
 	}
-	*n = parseNumber(text)
+	*n = ParseNumber(text)
 	return nil
 }
 
-func parseNumber(text string) Number {
+// ParseNumber reads a number as a person types it, with a decimal point or comma.
+// Text that is no finite number is kept as it is.
+func ParseNumber(text string) Number {
 	plain := strings.TrimSpace(text)
 	// Only what a person types is a number: not "0x1p4", "1_000" or "infinity".
 	if !strings.ContainsFunc(plain, func(r rune) bool { return !strings.ContainsRune("0123456789+-.,eE", r) }) {
@@ -81,19 +83,36 @@ func Decode(data []byte) (Record, error) {
 // DecodeAround reads from JSON a request, a struct that a record is embedded
 // in, and validates that record. The errors are those of Decode.
 func DecodeAround(data []byte, request any, r *Record) error {
-	if len(data) > MaxBytes {
-		return tooLarge
+	if err := DecodeRequest(data, MaxBytes, request); err != nil {
+		return err
+	}
+	if err := CheckVersion(r.V); err != nil {
+		return err
+	}
+	return r.Validate()
+}
+
+// DecodeRequest reads a request of at most so many bytes of JSON. The errors are
+// those of Decode, but nothing is validated.
+func DecodeRequest(data []byte, most int, request any) error {
+	if len(data) > most {
+		return wording.NewError("record-too-large", "", wording.Params{"limit": float64(most)})
 	}
 	if err := strict.Unmarshal(data, request); err != nil {
 		return refusal(data, err)
 	}
-	switch r.V {
+	return nil
+}
+
+// CheckVersion refuses what is of another version than this edition reads.
+func CheckVersion(v int) error {
+	switch v {
 	case Version:
-		return r.Validate()
+		return nil
 	case 0:
 		return versionError("0 (none is stated)")
 	}
-	return versionError(strconv.Itoa(r.V))
+	return versionError(strconv.Itoa(v))
 }
 
 func versionError(version string) error {
@@ -119,9 +138,6 @@ func refusal(data []byte, err error) error {
 	// A record of another version has other fields: that is what to say then.
 	if version, ok := statedVersion(data); ok && version != strconv.Itoa(Version) {
 		return versionError(version)
-	}
-	if e.Path == "curve" || strings.HasPrefix(e.Path, "curve.") {
-		return curveNotServed
 	}
 	if e.Problem == strict.Unknown {
 		return wording.NewError("unknown-field", e.Path, shown)

@@ -141,10 +141,14 @@ func TestDecodeRefuses(t *testing.T) {
 		{"half a version", `{"v":1.5}`, "record-version", "v"},
 		{"a version without end", `{"v":` + strings.Repeat("9", 100) + `}`, "record-version", "v"},
 
-		{"an empty curve", `{"v":1,"curve":{}}`, "curve-not-served", "curve"},
-		{"a curve", `{"v":1,"readings":[],"curve":{"name":"own","kind":"anchor","pairs":[{"hl":512.4,"value":241}]}}`, "curve-not-served", "curve"},
-		{"a list for a curve", `{"v":1,"curve":[]}`, "curve-not-served", "curve"},
-		{"a name for a curve", `{"v":1,"curve":"own"}`, "curve-not-served", "curve"},
+		{"an empty curve", `{"v":1,"curve":{}}`, "unknown-choice", "curve.device"},
+		{"a list for a curve", `{"v":1,"curve":[]}`, "wrong-type", "curve"},
+		{"a name for a curve", `{"v":1,"curve":"own"}`, "wrong-type", "curve"},
+		{"an unknown field of a curve", `{"v":1,"curve":{"colour":"red"}}`, "unknown-field", "curve.colour"},
+		{"text for a pair's value", `{"v":1,"curve":{"pairs":[{"hl":512,"value":"241"}]}}`, "wrong-type", "curve.pairs[0].value"},
+		{"a list for what came of a curve", `{"v":1,"curve":{"plot":[{"hl":[]}]}}`, "wrong-type", "curve.plot[0].hl"},
+		{"a curve without pairs", `{"v":1,"curve":{"device":"D","group":"low-alloy-steel","scale":"HBW","kind":"anchor","pairs":[]}}`, "pairs-none", "curve.pairs"},
+		{"a pair without a value", `{"v":1,"curve":{"device":"D","group":"low-alloy-steel","scale":"HBW","pairs":[{"hl":512,"u_hl":2}]}}`, "out-of-bounds", "curve.pairs[0].value"},
 
 		{"an unknown zone", `{"v":1,"zone":"HAZ"}`, "unknown-choice", "zone"},
 		{"an unknown device", `{"v":1,"device":"Q"}`, "unknown-choice", "device"},
@@ -175,19 +179,19 @@ func TestDecodeRefuses(t *testing.T) {
 
 func TestDecodeSaysWhy(t *testing.T) {
 	for data, want := range map[string]string{
-		`{"v":1,"readings":[{"value":612}`:          "The record is not valid JSON: at readings, a comma or ] is expected, but there is nothing. Open a record that this program wrote.",
-		`{"v":1 "readings":[]}`:                     `The record is not valid JSON: at record, a comma or } is expected, but there is "readings". Open a record that this program wrote.`,
-		`{"v":2,"spots":[]}`:                        "The record is of version 2, and this edition reads version 1. Open it with the edition that wrote it, or a newer one.",
-		`{"v":"1"}`:                                 `The record is of version "1", and this edition reads version 1. Open it with the edition that wrote it, or a newer one.`,
-		`{"v":1,"want":"{got}"}`:                    "The field want is unknown in a record of version 1. Remove it, or open the record with a newer edition.",
-		`{"v":1,"limit":{"max":1,"max":2}}`:         "The field limit.max stands twice. Keep one of the two.",
-		`{"v":1,"readings":[{"value":false}]}`:      "The field readings[0].value must be a number, but it holds false. Correct it.",
-		`{"v":1,"curve":{"name":"own"}}`:            "The field curve must be null: this edition converts without own curves. Remove the curve.",
-		`{"v":1,"zone":"{choices}"}`:                "The field zone holds {choices}, which is none of: base, haz, weld, other. Choose one of these.",
-		`{"v":1,"device":"D","scale":"HLG"}`:        "The field scale holds HLG, but device D reads in HLD. Correct the scale or the device.",
-		`{"v":1,"taken":"yesterday"}`:               "The field taken must be a time such as 2026-12-01T09:30:00Z, but it holds yesterday. Correct it.",
-		`{"v":1,"confidence":0.4}`:                  "The field confidence must lie between 0.5 and 0.999, but it is 0.4. Correct it.",
-		strings.Repeat(" ", record.MaxBytes) + "{}": "The record is larger than 262144 bytes. Split it into several.",
+		`{"v":1,"readings":[{"value":612}`:     "The record is not valid JSON: at readings, a comma or ] is expected, but there is nothing. Open a record that this program wrote.",
+		`{"v":1 "readings":[]}`:                `The record is not valid JSON: at record, a comma or } is expected, but there is "readings". Open a record that this program wrote.`,
+		`{"v":2,"spots":[]}`:                   "The record is of version 2, and this edition reads version 1. Open it with the edition that wrote it, or a newer one.",
+		`{"v":"1"}`:                            `The record is of version "1", and this edition reads version 1. Open it with the edition that wrote it, or a newer one.`,
+		`{"v":1,"want":"{got}"}`:               "The field want is unknown in a record of version 1. Remove it, or open the record with a newer edition.",
+		`{"v":1,"limit":{"max":1,"max":2}}`:    "The field limit.max stands twice. Keep one of the two.",
+		`{"v":1,"readings":[{"value":false}]}`: "The field readings[0].value must be a number, but it holds false. Correct it.",
+		`{"v":1,"curve":{"device":"D","group":"titanium","scale":"HRC"}}`: "The field curve.scale holds HRC, which nothing leads on from for Titanium alloy. Give the values in one of: HV, HBW.",
+		`{"v":1,"zone":"{choices}"}`:                                      "The field zone holds {choices}, which is none of: base, haz, weld, other. Choose one of these.",
+		`{"v":1,"device":"D","scale":"HLG"}`:                              "The field scale holds HLG, but device D reads in HLD. Correct the scale or the device.",
+		`{"v":1,"taken":"yesterday"}`:                                     "The field taken must be a time such as 2026-12-01T09:30:00Z, but it holds yesterday. Correct it.",
+		`{"v":1,"confidence":0.4}`:                                        "The field confidence must lie between 0.5 and 0.999, but it is 0.4. Correct it.",
+		strings.Repeat(" ", record.MaxBytes) + "{}":                       "The record is larger than 262144 bytes. Split it into several.",
 	} {
 		t.Run(want, func(t *testing.T) {
 			if _, err := record.Decode([]byte(data)); err == nil || err.Error() != want {

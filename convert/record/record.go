@@ -7,6 +7,7 @@ import (
 	"strconv"
 
 	"strikebook/convert/device"
+	"strikebook/convert/owncurve"
 	"strikebook/convert/scale"
 	"strikebook/convert/verdict"
 )
@@ -26,17 +27,19 @@ type Record struct {
 	Notes string `json:"notes,omitempty"` // anything else
 	Zone  Zone   `json:"zone,omitempty"`  // the part of a weld
 
+	PositionMm *float64 `json:"position_mm,omitempty"` // along a traverse, from any point that the whole traverse is measured from
+
 	Device    string           `json:"device,omitempty"`    // key of the impact device; "" for a direct method
 	Serial    string           `json:"serial,omitempty"`    // of the instrument
 	Direction device.Direction `json:"direction,omitempty"` // of impact; down unless told
 	Scale     scale.Key        `json:"scale,omitempty"`     // what the readings are in; the device's unless told
 	Group     string           `json:"group,omitempty"`     // key of the metal group; "" while it is not chosen
 
-	Readings []Reading      `json:"readings"`        // in the order they were taken, struck ones too
-	Piece    *device.Piece  `json:"piece,omitempty"` // the test piece
-	Block    *Block         `json:"block,omitempty"` // the check on a test block
-	Limit    *verdict.Limit `json:"limit,omitempty"` // what the spot has to meet
-	Curve    *Curve         `json:"curve,omitempty"` // must be null, see Curve
+	Readings []Reading       `json:"readings"`        // in the order they were taken, struck ones too
+	Piece    *device.Piece   `json:"piece,omitempty"` // the test piece
+	Block    *Block          `json:"block,omitempty"` // the check on a test block
+	Limit    *verdict.Limit  `json:"limit,omitempty"` // what the spot has to meet
+	Curve    *owncurve.Curve `json:"curve,omitempty"` // own curve or anchor as fitCurve gave it, or only what it is made of
 
 	// PermissibleError is how far the instrument may read wrong to either side, in
 	// the record's scale, where no block check says how far it does; 12 HL unless told.
@@ -103,10 +106,6 @@ const (
 	AsUncertainty BlockUse = "uncertainty" // it widens the uncertainty
 	AsCorrection  BlockUse = "correction"  // the mean is corrected for it
 )
-
-// Curve stands where a record would carry a curve of its own. This edition
-// converts without, and refuses one rather than leave it out of account.
-type Curve struct{}
 
 // Normalized returns the record with what it leaves open filled in: the scale
 // of its device or the device of its scale, the direction, the confidence.

@@ -21,8 +21,6 @@ const (
 	maxText = 2000
 )
 
-var curveNotServed = wording.NewError("curve-not-served", "curve", nil)
-
 // Validate says what makes the record unreadable: an unknown key, a time that
 // is none, a text without end. It answers a *wording.Error that names the first
 // such field, or nil. What is merely wrong with the measurement is for the
@@ -34,7 +32,7 @@ func (r Record) Validate() error {
 		}
 	}
 	if r.Curve != nil {
-		return curveNotServed
+		return r.Curve.Check("curve.")
 	}
 	return nil
 }
@@ -43,17 +41,24 @@ func (r Record) checkChoices() error {
 	if err := oneOf("zone", r.Zone, Base, HAZ, Weld, Other); err != nil {
 		return err
 	}
-	if err := oneOf("device", r.Device, keys(device.All(), func(d device.Device) string { return d.Key })...); err != nil {
-		return err
+	// The lists are only made for the sentence that shows them.
+	if _, ok := device.ByKey(r.Device); !ok && r.Device != "" {
+		if err := oneOf("device", r.Device, keys(device.All(), func(d device.Device) string { return d.Key })...); err != nil {
+			return err
+		}
 	}
 	if err := oneOf("direction", r.Direction, device.Directions()...); err != nil {
 		return err
 	}
-	if err := oneOf("group", r.Group, keys(metal.All(), func(g metal.Group) string { return g.Key })...); err != nil {
-		return err
+	if _, ok := metal.ByKey(r.Group); !ok && r.Group != "" {
+		if err := oneOf("group", r.Group, keys(metal.All(), func(g metal.Group) string { return g.Key })...); err != nil {
+			return err
+		}
 	}
-	if err := oneOf("scale", r.Scale, readable()...); err != nil {
-		return err
+	if s, _ := scale.ByKey(r.Scale); r.Scale != "" && !s.Leeb && !s.Direct() {
+		if err := oneOf("scale", r.Scale, readable()...); err != nil {
+			return err
+		}
 	}
 	if p := r.Piece; p != nil {
 		if err := oneOf("piece.support", p.Support, device.Free, device.Supported, device.Coupled); err != nil {
@@ -74,7 +79,9 @@ func (r Record) checkChoices() error {
 		if err := oneOf("limit.rule", l.Rule, verdict.Rules()...); err != nil {
 			return err
 		}
-		return oneOf("limit.scale", l.Scale, limitable()...)
+		if _, ok := scale.ByKey(l.Scale); !ok && l.Scale != "" {
+			return oneOf("limit.scale", l.Scale, limitable()...)
+		}
 	}
 	return nil
 }
@@ -133,23 +140,33 @@ func (r Record) checkScale() error {
 }
 
 func (r Record) checkTexts() error {
-	texts := []struct{ path, text string }{
+	for _, t := range [...]struct{ path, text string }{
 		{"id", r.ID}, {"label", r.Label}, {"job", r.Job}, {"by", r.By}, {"notes", r.Notes}, {"serial", r.Serial}, {"taken", r.Taken},
+	} {
+		if tooLong(t.text) {
+			return textError(t.path, t.text)
+		}
 	}
 	for i, reading := range r.Readings {
-		texts = append(texts,
-			struct{ path, text string }{fmt.Sprintf("readings[%d].struck", i), reading.Struck},
-			struct{ path, text string }{fmt.Sprintf("readings[%d].value", i), reading.Value.Text})
+		if tooLong(reading.Struck) {
+			return textError(fmt.Sprintf("readings[%d].struck", i), reading.Struck)
+		}
+		if tooLong(reading.Value.Text) {
+			return textError(fmt.Sprintf("readings[%d].value", i), reading.Value.Text)
+		}
 	}
 	for i, n := range r.blockReadings() {
-		texts = append(texts, struct{ path, text string }{fmt.Sprintf("block.readings[%d]", i), n.Text})
-	}
-	for _, t := range texts {
-		if n := utf8.RuneCountInString(t.text); n > maxText {
-			return wording.NewError("text-too-long", t.path, wording.Params{"path": t.path, "n": n, "limit": maxText})
+		if tooLong(n.Text) {
+			return textError(fmt.Sprintf("block.readings[%d]", i), n.Text)
 		}
 	}
 	return nil
+}
+
+func tooLong(text string) bool { return len(text) > maxText && utf8.RuneCountInString(text) > maxText }
+
+func textError(path, text string) error {
+	return wording.NewError("text-too-long", path, wording.Params{"path": path, "n": utf8.RuneCountInString(text), "limit": maxText})
 }
 
 func (r Record) checkReadings() error {
@@ -183,6 +200,10 @@ func (r Record) checkTimes() error {
 	}
 	return nil
 }
+
+// TakenAt returns when the readings were taken; ok is false where that is not
+// written down.
+func (r Record) TakenAt() (at time.Time, ok bool) { return parseTime(r.Taken) }
 
 // SinceBlock returns how long after the check on the block the readings were
 // taken; less than nothing if before. ok is false where either time is not

@@ -20,6 +20,9 @@ const (
 	Model    Basis = "model"    // the built-in rebound model
 	Standard Basis = "standard" // a published conversion
 	Similar  Basis = "similar"  // the likeness of Vickers and Brinell, no table
+	Anchored Basis = "anchored" // the built-in rebound model, scaled to pairs of the user's own
+	Own      Basis = "own"      // a curve through pairs of the user's own
+	OwnTable Basis = "table"    // a published table the user owns
 )
 
 // Step is one step of a conversion.

@@ -55,6 +55,8 @@ type Uncertainty struct {
 	DoF      DoF      `json:"dof"`      // effective degrees of freedom; null: infinite
 	Coverage Coverage `json:"coverage"` // where K comes from
 	Terms    []Term   `json:"terms"`
+
+	sum sum // of the terms, where Coverage is ByTerms
 }
 
 // Coverage says where a coverage factor comes from.
@@ -92,11 +94,22 @@ func Combine(terms []Term, confidence float64) Uncertainty {
 		terms[i].Share = t.Contribution * t.Contribution / max(variance, math.SmallestNonzeroFloat64)
 	}
 	if u.Standard > 0 && !closedFormHolds(terms) {
-		u.Coverage = ByTerms
-		u.K = newSum(terms).coverage(confidence, u.K*u.Standard) / u.Standard
+		u.Coverage, u.sum = ByTerms, newSum(terms)
+		u.K = u.sum.coverage(confidence, u.K*u.Standard) / u.Standard
 	}
 	u.Expanded = u.K * u.Standard
 	return u
+}
+
+// CombineStandard is the combined standard uncertainty of independent terms,
+// and nothing else.
+func CombineStandard(terms []Term) float64 {
+	variance := 0.0
+	for _, t := range terms {
+		c := t.Sensitivity * t.Standard
+		variance += c * c
+	}
+	return math.Sqrt(variance)
 }
 
 // closedFormHolds reports whether Student's factor for the effective degrees of
@@ -121,7 +134,7 @@ func (u Uncertainty) CDF(x float64) float64 {
 		return max(0, math.Copysign(1, x))
 	}
 	if u.Coverage == ByTerms {
-		p, _ := newSum(u.Terms).cdf(x)
+		p, _ := u.sum.cdf(x)
 		return p
 	}
 	return StudentCDF(x/u.Standard, float64(u.DoF))

@@ -12,7 +12,8 @@ import (
 )
 
 // Unmarshal reads one JSON value into what v points to. An error is an *Error.
-// null leaves a value as it is.
+// null leaves a value as it is. Bytes take any value as it stands, as a part of
+// data, and a map takes an object of numbers and texts.
 func Unmarshal(data []byte, v any) error {
 	r := reader{data: data}
 	if err := r.value(reflect.ValueOf(v).Elem()); err != nil {
@@ -104,13 +105,18 @@ func (r *reader) value(v reflect.Value) error {
 	case reflect.Struct:
 		return r.object(v)
 	case reflect.Slice:
+		if v.Type().Elem().Kind() == reflect.Uint8 {
+			return r.asItStands(v)
+		}
 		return r.list(v)
+	case reflect.Map:
+		return r.scalars(v)
 	case reflect.String:
 		if first != '"' {
 			return r.wrong(start, "a text")
 		}
 		text, err := r.text()
-		v.SetString(text)
+		v.SetString(string(text))
 		return err
 	case reflect.Int:
 		literal, err := r.number("a whole number")
@@ -191,18 +197,18 @@ func (r *reader) object(v reflect.Value) error {
 		if err != nil {
 			return err
 		}
-		i := slices.IndexFunc(known, func(f field) bool { return f.name == name })
+		i := slices.IndexFunc(known, func(f field) bool { return f.name == string(name) })
 		switch {
 		case i < 0:
-			return &Error{Problem: Unknown, Path: name, Want: "a known field", Got: name}
+			return &Error{Problem: Unknown, Path: string(name), Want: "a known field", Got: string(name)}
 		case seen[i]:
-			return &Error{Problem: Duplicate, Path: name, Want: "the field once", Got: name}
+			return &Error{Problem: Duplicate, Path: string(name), Want: "the field once", Got: string(name)}
 		case !r.take(':'):
 			return r.syntax("a colon")
 		}
 		seen[i] = true
-		if err := r.value(v.FieldByIndex(known[i].index)); err != nil {
-			return within(err, name)
+		if err := r.value(known[i].in(v)); err != nil {
+			return within(err, known[i].name)
 		}
 		if !r.take(',') {
 			break
@@ -222,12 +228,14 @@ func (r *reader) list(v reflect.Value) error {
 	if r.take(']') {
 		return nil
 	}
-	for {
-		element := reflect.New(v.Type().Elem()).Elem()
+	for n := 0; ; n++ {
+		v.Grow(1)
+		v.SetLen(n + 1)
+		element := v.Index(n)
+		element.SetZero()
 		if err := r.value(element); err != nil {
-			return within(err, "["+strconv.Itoa(v.Len())+"]")
+			return within(err, "["+strconv.Itoa(n)+"]")
 		}
-		v.Set(reflect.Append(v, element))
 		if !r.take(',') {
 			break
 		}
@@ -236,6 +244,103 @@ func (r *reader) list(v reflect.Value) error {
 		return r.syntax("a comma or ]")
 	}
 	return nil
+}
+
+// scalars reads an object into a map, whose values are numbers and texts.
+func (r *reader) scalars(v reflect.Value) error {
+	if !r.take('{') {
+		return r.wrong(r.at, "an object")
+	}
+	v.Set(reflect.MakeMap(v.Type()))
+	if r.take('}') {
+		return nil
+	}
+	for {
+		if r.next() != '"' {
+			return r.syntax("a name in quotes")
+		}
+		text, err := r.text()
+		if err != nil {
+			return err
+		}
+		name := string(text)
+		if !r.take(':') {
+			return r.syntax("a colon")
+		}
+		value, err := r.scalar()
+		if err != nil {
+			return within(err, name)
+		}
+		v.SetMapIndex(reflect.ValueOf(name).Convert(v.Type().Key()), reflect.ValueOf(value))
+		if !r.take(',') {
+			break
+		}
+	}
+	if !r.take('}') {
+		return r.syntax("a comma or }")
+	}
+	return nil
+}
+
+// scalar reads a number or a text.
+func (r *reader) scalar() (any, error) {
+	if r.next() == '"' {
+		text, err := r.text()
+		return string(text), err
+	}
+	start := r.at
+	literal, err := r.number("a number or a text")
+	if err != nil {
+		return nil, err
+	}
+	n, err := strconv.ParseFloat(literal, 64)
+	if err != nil {
+		return nil, r.wrong(start, "a number within bounds")
+	}
+	return n, nil
+}
+
+// asItStands keeps a value as it stands, to be read later: any object, or else
+// any list, text, number, true, false or null. Only its brackets and its texts
+// are looked at, to find its end.
+func (r *reader) asItStands(v reflect.Value) error {
+	r.next()
+	start := r.at
+	for depth := 0; ; {
+		switch r.next() {
+		case '"':
+			if _, err := r.text(); err != nil {
+				return err
+			}
+		case '{', '[':
+			depth++
+			r.at++
+		case '}', ']':
+			depth--
+			r.at++
+		case 0:
+			return r.syntax("the rest of it")
+		case ',', ':':
+			if depth == 0 {
+				return r.wrong(r.at, "a value")
+			}
+			r.at++
+			continue
+		default:
+			r.at++
+			for r.at < len(r.data) && strings.IndexByte(",:{}[]\" \t\r\n", r.data[r.at]) < 0 {
+				r.at++
+			}
+		}
+		if depth < 0 {
+			r.at = start
+			return r.syntax("a value")
+		}
+		if depth == 0 {
+			v.SetBytes(r.data[start:r.at:r.at])
+			return nil
+		}
+	}
 }
 
 // number steps over a number and returns it as it stands.
@@ -278,31 +383,38 @@ func (r *reader) notNumber(start int, want string) error {
 	return r.syntax(want)
 }
 
-// text reads a string. Bytes that are no UTF-8 become U+FFFD.
-func (r *reader) text() (string, error) {
-	var b []byte
-	for r.at++; r.at < len(r.data); {
+// text reads a string. What it returns may be a part of the input. Bytes that
+// are no UTF-8 become U+FFFD.
+func (r *reader) text() ([]byte, error) {
+	r.at++
+	start := r.at
+	for r.at < len(r.data) && r.data[r.at] != '"' && r.data[r.at] != '\\' && r.data[r.at] >= ' ' {
+		r.at++
+	}
+	// Most texts end here, and need no copy.
+	b := r.data[start:r.at:r.at]
+	for r.at < len(r.data) {
 		switch c := r.data[r.at]; {
 		case c == '"':
 			r.at++
 			if !utf8.Valid(b) {
 				b = []byte(string([]rune(string(b))))
 			}
-			return string(b), nil
+			return b, nil
 		case c < ' ':
-			return "", r.syntax("no control character in a text")
+			return nil, r.syntax("no control character in a text")
 		case c != '\\':
 			b = append(b, c)
 			r.at++
 		default:
 			escaped, ok := r.escape()
 			if !ok {
-				return "", r.syntax("a valid escape")
+				return nil, r.syntax("a valid escape")
 			}
 			b = utf8.AppendRune(b, escaped)
 		}
 	}
-	return "", r.syntax("a closing quote")
+	return nil, r.syntax("a closing quote")
 }
 
 // escape reads what a backslash introduces.

@@ -70,14 +70,15 @@ var (
 type field struct {
 	name      string
 	key       []byte // the name as it is written, with quotes and colon
-	index     []int  // where it stands, for reflect.Value.FieldByIndex
+	index     []int  // where it stands, as reflect.Value.FieldByIndex takes it
 	omitEmpty bool   // whether it is left out when empty
 }
 
 // fields remembers what the tags of each struct type say: reflect.Type to []field.
 var fields sync.Map
 
-// fieldsOf lists the fields of a struct, those of embedded structs among them.
+// fieldsOf lists the fields of a struct, those of embedded structs among them. An
+// embedded pointer to a struct is nil while none of its fields is there.
 func fieldsOf(t reflect.Type) []field {
 	if known, ok := fields.Load(t); ok {
 		return known.([]field)
@@ -85,8 +86,15 @@ func fieldsOf(t reflect.Type) []field {
 	var all []field
 	for i := range t.NumField() {
 		f := t.Field(i)
+		if !f.IsExported() {
+			continue
+		}
 		if f.Anonymous {
-			for _, inner := range fieldsOf(f.Type) {
+			embedded := f.Type
+			if embedded.Kind() == reflect.Pointer {
+				embedded = embedded.Elem()
+			}
+			for _, inner := range fieldsOf(embedded) {
 				inner.index = append([]int{i}, inner.index...)
 				all = append(all, inner)
 			}
@@ -97,4 +105,18 @@ func fieldsOf(t reflect.Type) []field {
 	}
 	fields.Store(t, all)
 	return all
+}
+
+// in returns the field of a struct, and makes what it is embedded in.
+func (f field) in(v reflect.Value) reflect.Value {
+	last := len(f.index) - 1
+	for _, i := range f.index[:last] {
+		if v = v.Field(i); v.Kind() == reflect.Pointer {
+			if v.IsNil() {
+				v.Set(reflect.New(v.Type().Elem()))
+			}
+			v = v.Elem()
+		}
+	}
+	return v.Field(f.index[last])
 }

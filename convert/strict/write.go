@@ -12,7 +12,10 @@ import (
 // Marshal writes a value as JSON, as encoding/json does without escaping HTML,
 // but for a nil slice or map, which is [] or {}: lists are never null. A number
 // that JSON cannot hold (NaN, infinite) is an error.
-func Marshal(v any) ([]byte, error) { return appendValue(nil, reflect.ValueOf(v)) }
+func Marshal(v any) ([]byte, error) { return Append(nil, v) }
+
+// Append appends a value to b, written as Marshal writes it.
+func Append(b []byte, v any) ([]byte, error) { return appendValue(b, reflect.ValueOf(v)) }
 
 func appendValue(b []byte, v reflect.Value) ([]byte, error) {
 	if !v.IsValid() {
@@ -28,6 +31,9 @@ func appendValue(b []byte, v reflect.Value) ([]byte, error) {
 	case reflect.Struct:
 		return appendObject(b, v)
 	case reflect.Slice:
+		if v.Type().Elem().Kind() == reflect.Uint8 {
+			return append(b, v.Bytes()...), nil
+		}
 		return appendList(b, v)
 	case reflect.Map:
 		return appendMap(b, v)
@@ -47,8 +53,8 @@ func appendObject(b []byte, v reflect.Value) ([]byte, error) {
 	b = append(b, '{')
 	first := true
 	for _, f := range fieldsOf(v.Type()) {
-		value := v.FieldByIndex(f.index)
-		if f.omitEmpty && empty(value) {
+		value, err := v.FieldByIndexErr(f.index)
+		if err != nil || f.omitEmpty && empty(value) { // err: an embedded pointer is nil
 			continue
 		}
 		if !first {
@@ -56,7 +62,6 @@ func appendObject(b []byte, v reflect.Value) ([]byte, error) {
 		}
 		first = false
 		b = append(b, f.key...)
-		var err error
 		if b, err = appendValue(b, value); err != nil {
 			return b, within(err, f.name)
 		}
@@ -133,6 +138,14 @@ func appendText(b []byte, text string) []byte {
 	const digits = "0123456789abcdef"
 	b = append(b, '"')
 	for i := 0; i < len(text); {
+		plain := i
+		for i < len(text) && text[i] >= ' ' && text[i] < utf8.RuneSelf && text[i] != '"' && text[i] != '\\' {
+			i++
+		}
+		b = append(b, text[plain:i]...)
+		if i == len(text) {
+			break
+		}
 		c := text[i]
 		if c < utf8.RuneSelf {
 			switch {
@@ -148,11 +161,9 @@ func appendText(b []byte, text string) []byte {
 				b = append(b, `\r`...)
 			case c == '\t':
 				b = append(b, `\t`...)
-			case c < ' ':
+			default:
 				b = append(b, `\u00`...)
 				b = append(b, digits[c>>4], digits[c&15])
-			default:
-				b = append(b, c)
 			}
 			i++
 			continue

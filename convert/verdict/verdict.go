@@ -76,8 +76,10 @@ type Decision struct {
 }
 
 // Decide decides a comparison.
-func (c Comparison) Decide() Decision {
-	u := stats.Combine(c.Terms, c.Confidence)
+func (c Comparison) Decide() Decision { return c.DecideWith(stats.Combine(c.Terms, c.Confidence)) }
+
+// DecideWith decides a comparison whose terms have been combined.
+func (c Comparison) DecideWith(u stats.Uncertainty) Decision {
 	d := Decision{Guard: c.guard(u), Uncertainty: u}
 	d.Outcome = c.Band.Outcome(c.Value, d.Guard)
 	d.Probability = min(1, max(0, u.CDF(c.Band.Max-c.Value)-u.CDF(c.Band.Min-c.Value)))
@@ -116,7 +118,13 @@ const MostReadings = 30
 // that is at least from. ok is false where no number up to MostReadings would
 // do; best is then the guard that so many would reach.
 func (c Comparison) ReadingsFor(wanted, sd float64, from int) (n int, best float64, ok bool) {
-	best = c.Decide().Guard
+	if from > MostReadings {
+		return 0, c.Decide().Guard, false
+	}
+	// The guard shrinks as the readings grow more, so that the most come first.
+	if best = c.withReadings(MostReadings, sd).Decide().Guard; best > wanted {
+		return 0, best, false
+	}
 	for n = from; n <= MostReadings; n++ {
 		best = c.withReadings(n, sd).Decide().Guard
 		if best <= wanted {

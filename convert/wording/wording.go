@@ -78,6 +78,9 @@ func Say(code string, params Params) Sentence {
 	return s
 }
 
+// KindOf returns what the sentence of a code is for.
+func KindOf(code string) Kind { return byCode[code].Kind }
+
 // fill puts the parameters into a sentence.
 func fill(text string, params Params) string {
 	var b strings.Builder

@@ -10,13 +10,14 @@ import (
 
 	"strikebook/convert/device"
 	"strikebook/convert/metal"
+	"strikebook/convert/owncurve"
 	"strikebook/convert/record"
 	"strikebook/convert/scale"
 	"strikebook/convert/verdict"
 )
 
 // Random returns a valid record, made so that it comes back from its JSON
-// unchanged. Any field but the curve may be filled, with the ordinary and with
+// unchanged. Any field may be filled, with the ordinary and with
 // what is seldom typed; any that a record may leave open is often left open. It
 // need not make sense as a measurement. Equal generators make equal records.
 func Random(rng *rand.Rand) record.Record {
@@ -29,6 +30,7 @@ func Random(rng *rand.Rand) record.Record {
 		By:               maybe(rng, text),
 		Notes:            maybe(rng, text),
 		Zone:             pick(rng, "", record.Base, record.HAZ, record.Weld, record.Other),
+		PositionMm:       maybe(rng, quantity),
 		Serial:           maybe(rng, text),
 		Direction:        pick(rng, append(device.Directions(), "")...),
 		Group:            maybe(rng, func(rng *rand.Rand) string { return pick(rng, metal.All()...).Key }),
@@ -36,6 +38,7 @@ func Random(rng *rand.Rand) record.Record {
 		Piece:            maybe(rng, piece),
 		Block:            maybe(rng, block),
 		Limit:            maybe(rng, limit),
+		Curve:            maybe(rng, Curve),
 		PermissibleError: maybe(rng, quantity),
 		Confidence:       pick(rng, 0, record.LeastConfidence, 0.68, record.DefaultConfidence, record.GreatestConfidence),
 	}
@@ -229,3 +232,58 @@ func limit(rng *rand.Rand) *verdict.Limit {
 		Rule:  pick(rng, append(verdict.Rules(), "")...),
 	}
 }
+
+// Curve makes a valid own curve, with or without what came of it. It rises, but
+// need not make sense.
+func Curve(rng *rand.Rand) *owncurve.Curve {
+	for {
+		d := Definition(rng)
+		if err := d.Check(""); err != nil {
+			continue // what was rounded may lie just outside
+		}
+		if fitted, err := owncurve.Make(d); err == nil && rng.IntN(2) == 0 {
+			return fitted.Curve()
+		}
+		return &owncurve.Curve{Definition: d}
+	}
+}
+
+// Definition makes what a curve is made of, nearly always valid.
+func Definition(rng *rand.Rand) owncurve.Definition {
+	body, g := pick(rng, device.All()...), pick(rng, metal.All()...)
+	d := owncurve.Definition{
+		Name: maybe(rng, text), Device: body.Key, Group: g.Key, Scale: scale.HV, Source: maybe(rng, text), Serial: maybe(rng, text),
+		Date: maybe(rng, date), Kind: pick(rng, owncurve.Anchor, owncurve.Own, owncurve.Table, ""),
+	}
+	lo, hi := g.Lo, g.Hi
+	if leg := pick(rng, scale.Legs(g)...); rng.IntN(2) == 0 {
+		if least, greatest, ok := leg.Span(g.Lo, g.Hi); ok {
+			d.Scale, lo, hi = leg.Scale.Key, least, greatest
+		}
+	}
+	n := 5 + rng.IntN(8)
+	switch {
+	case d.Kind == owncurve.Anchor, d.Kind == "" && rng.IntN(2) == 0:
+		n = 1 + rng.IntN(4)
+	case d.Kind == owncurve.Table:
+		d.UPercent, d.Source = 0.1+tenths(rng, 5), text(rng)
+	}
+	noise := pick(rng, 0.0, 0.5, 3)
+	for i := range n {
+		share := (float64(i) + 0.8*rng.Float64()) / float64(n)
+		p := owncurve.Pair{UHL: tenths(rng, 4), UValue: 0.1 + tenths(rng, 4), Label: maybe(rng, text), Date: maybe(rng, date)}
+		p.HL = math.Round(10*(body.Lo+share*(body.Hi-body.Lo))) / 10
+		p.Value = math.Round(10*(lo+share*(hi-lo))) / 10
+		if d.Kind != owncurve.Table {
+			p.Value = math.Round(10*min(hi, max(lo, p.Value+noise*p.UValue*rng.NormFloat64()))) / 10
+		}
+		if rng.IntN(8) == 0 {
+			p.Readings = []float64{p.HL, p.HL - 1, p.HL + 1}
+		}
+		d.Pairs = append(d.Pairs, p)
+	}
+	rng.Shuffle(n, func(i, j int) { d.Pairs[i], d.Pairs[j] = d.Pairs[j], d.Pairs[i] })
+	return d
+}
+
+func date(rng *rand.Rand) string { return moment(rng)[:len("2026-12-01")] }

@@ -1,6 +1,7 @@
 // The page's side of the worker: a promise for each question. A worker that
 // dies is started again, and what it still owed is asked again, once.
 
+import { catalogue } from "../gen/catalogue";
 import type * as core from "../gen/contract";
 import type { Call, Question, Report } from "./protocol";
 
@@ -65,6 +66,10 @@ export class Core extends EventTarget {
     return this.ask("moreReadings", JSON.stringify(request)).then(parsed<core.MoreReadings>);
   }
 
+  fitCurve(definition: core.Definition): Promise<core.Fitted> {
+    return this.ask("fitCurve", JSON.stringify(definition)).then(parsed<core.Fitted>);
+  }
+
   decodeLink(fragment: string): Promise<core.Record> {
     return this.ask("decodeLink", fragment).then(parsed<core.Record>);
   }
@@ -74,6 +79,25 @@ export class Core extends EventTarget {
     const text = await this.ask("encodeLink", JSON.stringify(record));
     if (text.startsWith("{")) parsed(text);
     return text;
+  }
+
+  /** The rows of a list for some records, in their order. */
+  evaluateRows(records: core.Record[]): Promise<core.BookRow[]> {
+    const book: core.Book = { v: catalogue.recordVersion, records };
+    return this.ask("evaluateRows", JSON.stringify(book)).then((text) => parsed<core.BookRows>(text).rows);
+  }
+
+  summarizeRows(rows: core.BookRow[]): Promise<core.Summary> {
+    return this.ask("summarizeRows", JSON.stringify({ rows } satisfies core.BookRows)).then(parsed<core.Summary>);
+  }
+
+  readTable(request: core.Request): Promise<core.Table> {
+    return this.ask("readTable", JSON.stringify(request)).then(parsed<core.Table>);
+  }
+
+  /** A table for other programs, as CSV. */
+  writeTable(records: core.Record[]): Promise<string> {
+    return this.ask("writeTable", JSON.stringify({ v: catalogue.recordVersion, records } satisfies core.Book));
   }
 
   private ask(call: Call, text: string): Promise<string> {

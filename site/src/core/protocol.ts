@@ -2,7 +2,7 @@
 // question has one answer with the same id; the core's own errors are answers.
 
 /** The functions of the core, by name: text in, text out. */
-export type Call = "evaluate" | "goNoGo" | "moreReadings" | "encodeLink" | "decodeLink" | "catalogue";
+export type Call = "evaluate" | "goNoGo" | "moreReadings" | "fitCurve" | "encodeLink" | "decodeLink" | "catalogue" | "evaluateRows" | "summarizeRows" | "readTable" | "writeTable";
 
 /** The page asks. */
 export interface Question {

@@ -1,5 +1,103 @@
 // Generated from the Go types by build/contract. Do not edit.
 
+/** Book is a job of many spots. */
+export interface Book {
+  /** version of this layout, 1 */
+  v: number;
+  /** at most MaxRecords */
+  records: RecordText[];
+}
+
+/**
+ * RecordText is a record as JSON, not read yet: one that cannot be read spoils
+ * none of the others in its book.
+ */
+export type RecordText = Record;
+
+/** BookSheet is a book evaluated. */
+export interface BookSheet {
+  /** one for each record, in their order */
+  sheets: SheetText[];
+  summary: Summary;
+}
+
+/**
+ * SheetText is the JSON of a record's sheet: what Evaluate answers, or {"error":
+ * ...} in the place of a record that could not be evaluated. Ten thousand sheets
+ * fit into memory as text, but hardly as what they are read into.
+ */
+export type SheetText = Sheet | { error: Error };
+
+/** BookRows are rows of a book. */
+export interface BookRows {
+  /** at most MaxRecords */
+  rows: BookRow[];
+}
+
+/**
+ * BookRow is a record and its sheet as far as a list of spots shows them, and as
+ * a summary needs them. A number that does not exist is null.
+ */
+export interface BookRow {
+  id: string;
+  label: string;
+  job: string;
+  /** left out where it is not stated */
+  zone?: Zone;
+  /** along a traverse, mm */
+  position: number | null;
+  device: string;
+  /** what the readings are in */
+  scale: Key;
+  group: string;
+  /** readings that count */
+  n: number;
+  /** readings that were struck */
+  struck: number;
+  /** of the readings, in Scale */
+  mean: number | null;
+  sd: number | null;
+  /** the mean corrected; null also where a finding says that nothing was measured */
+  corrected: number | null;
+  shownMean: string;
+  /** in the limit's scale, then in HV, as far as the sheet has them; in Scale where it has neither; the first is the one to show */
+  values: BookValue[];
+  /** "cannot-say" where Error stands */
+  outcome: Outcome;
+  /** of conformity */
+  probability: number | null;
+  /** in percent */
+  shownChance: string;
+  /** from the nearer bound of the limit to the value, in expanded uncertainties; less than nothing outside */
+  margin: number | null;
+  /** of the limit as it was written down, "" without one, and so are the next two */
+  limitScale: Key;
+  limitMin: number | null;
+  limitMax: number | null;
+  /** their codes, in the order of the job */
+  findings: string[];
+  /** the gravest of them: stop, warn or note; left out without findings */
+  level?: Kind;
+  /** why the record could not be evaluated; null if it could */
+  error: Error | null;
+}
+
+/** BookValue is a value of a spot in one scale. */
+export interface BookValue {
+  scale: Key;
+  value: number;
+  /** expanded uncertainty */
+  expanded: number;
+  low: number;
+  high: number;
+  /** "326 HBW (HLD)" */
+  shown: string;
+  /** "24" */
+  shownExpanded: string;
+  shownLow: string;
+  shownHigh: string;
+}
+
 /** Catalogue is what a record can choose from, each with its source. */
 export interface Catalogue {
   edition: string;
@@ -99,6 +197,8 @@ export interface GoNoGoRequest {
   notes?: string;
   /** the part of a weld */
   zone?: Zone;
+  /** along a traverse, from any point that the whole traverse is measured from */
+  position_mm?: number;
   /** key of the impact device; "" for a direct method */
   device?: string;
   /** of the instrument */
@@ -117,7 +217,7 @@ export interface GoNoGoRequest {
   block?: Block;
   /** what the spot has to meet */
   limit?: Limit;
-  /** must be null, see Curve */
+  /** own curve or anchor as fitCurve gave it, or only what it is made of */
   curve?: Curve;
   /**
    * PermissibleError is how far the instrument may read wrong to either side, in
@@ -175,6 +275,8 @@ export interface MoreReadingsRequest {
   notes?: string;
   /** the part of a weld */
   zone?: Zone;
+  /** along a traverse, from any point that the whole traverse is measured from */
+  position_mm?: number;
   /** key of the impact device; "" for a direct method */
   device?: string;
   /** of the instrument */
@@ -193,7 +295,7 @@ export interface MoreReadingsRequest {
   block?: Block;
   /** what the spot has to meet */
   limit?: Limit;
-  /** must be null, see Curve */
+  /** own curve or anchor as fitCurve gave it, or only what it is made of */
   curve?: Curve;
   /**
    * PermissibleError is how far the instrument may read wrong to either side, in
@@ -417,6 +519,156 @@ export interface Finding {
   source: string;
 }
 
+/**
+ * Summary is what the rows of a book come to. Rows are named by their position,
+ * from 0.
+ */
+export interface Summary {
+  /** records */
+  n: number;
+  /** by outcome */
+  counts: Counts;
+  /** the rows that could not be evaluated, which count as cannot-say */
+  invalid: number[];
+  /** in which the spots are compared: the limit's where every spot with a value has one in it, else HV, else the one of most readings; "" where there is no value at all */
+  scale: Key;
+  /** how many rows have no value in it */
+  without: number;
+  /** the row least likely to conform; null where no row was set against a limit */
+  worst: number | null;
+  /** in the order base, haz, weld, other, not stated; those with a value */
+  byZone: ZoneSummary[];
+  uniformity: Uniformity;
+  traverse: Traverse;
+}
+
+/** Counts says how many rows have an outcome. */
+export interface Counts {
+  conforms: number;
+  "does-not-conform": number;
+  "not-proven": number;
+  "cannot-say": number;
+  "no-limit": number;
+}
+
+/** ZoneSummary describes the spots of one zone that have a value in Scale. */
+export interface ZoneSummary {
+  /** left out where it is not stated */
+  zone?: Zone;
+  scale: Key;
+  /** spots */
+  n: number;
+  mean: number;
+  /**
+   * Expanded is the expanded uncertainty of the mean, as if every spot were wrong
+   * to the same side: they share the instrument and the conversion, so that it is
+   * the mean of theirs.
+   */
+  expanded: number;
+  /** the least value, */
+  min: number;
+  minRow: number;
+  /** and what it may be as low as */
+  low: number;
+  /** the greatest value, */
+  max: number;
+  maxRow: number;
+  /** and what it may be as high as */
+  high: number;
+  /** the mean, "231 HBW (HLD)" */
+  shown: string;
+  /** "14" */
+  shownExpanded: string;
+  /** "218" */
+  shownMin: string;
+  shownLow: string;
+  shownMax: string;
+  shownHigh: string;
+}
+
+/**
+ * Traverse is the hardness along a weld. Of a book with several welds, summarize
+ * the rows of each by themselves.
+ */
+export interface Traverse {
+  /** the rows that state a position, in its order */
+  points: TraversePoint[];
+  /** the limit in the summary's scale, where all points have the same; null: none */
+  min: number | null;
+  max: number | null;
+  /** the row of the hardest spot in the heat-affected zone, with or without a position; null without one */
+  peak: number | null;
+  /** names the peak; "" without one */
+  sentence: string;
+  code: string;
+  params: Params;
+}
+
+/** TraversePoint is a spot on a traverse. */
+export interface TraversePoint {
+  /** of its row */
+  index: number;
+  /** mm */
+  position: number;
+  /** left out where it is not stated */
+  zone?: Zone;
+  outcome: Outcome;
+  /** in the summary's scale; null where the spot has none, and so are the next two */
+  value: number | null;
+  low: number | null;
+  high: number | null;
+  /** "12.5" */
+  shownPosition: string;
+  /** "" where there is no value */
+  shown: string;
+  shownExpanded: string;
+}
+
+/**
+ * Uniformity says whether the spots differ by more than the readings at a spot
+ * scatter: a one-way analysis of variance of the corrected readings.
+ */
+export interface Uniformity {
+  outcome: UniformityOutcome;
+  /** null where the spots could not be compared */
+  F: number | null;
+  /** between the spots, and within them; [] where they could not be compared */
+  df: number[];
+  /** the probability of so great an F if all spots were alike */
+  p: number | null;
+  /** how many were compared: the largest set in one scale and metal */
+  spots: number;
+  /** how many others have readings */
+  leftOut: number;
+  /** of the readings compared */
+  scale: Key;
+  /** their metal; "" where it is not chosen */
+  group: string;
+  /** mean square between the spots, and */
+  between: number | null;
+  /** within them; null where there is none */
+  within: number | null;
+  /** of all readings compared */
+  mean: number | null;
+  /** the least and */
+  min: number | null;
+  /** the greatest mean of a spot */
+  max: number | null;
+  /** "1.18" */
+  shownF: string;
+  /** "0.35", "< 0.001" */
+  shownP: string;
+  /** with its meaning for the part, or why the spots cannot be compared */
+  sentence: string;
+  /** what was left out; "" where nothing was */
+  note: string;
+  /** both by their codes; the parts are "sentence" and "note" */
+  said: Saying[];
+}
+
+/** UniformityOutcome is what a comparison of spots comes to. */
+export type UniformityOutcome = "even" | "uneven" | "not-known";
+
 /** Verdict is the spot against its limit. */
 export interface Verdict {
   outcome: Outcome;
@@ -500,6 +752,240 @@ export type ShapeKind = "plate" | "pipe" | "bar" | "none";
 export type ShortfallKind = "piece-too-light" | "piece-too-thin" | "wall-too-thin" | "case-too-thin" | "surface-too-rough" | "radius-too-small" | "spacing-too-close" | "edge-too-near" | "temperature-outside";
 
 /**
+ * Curve is a conversion that the user owns, as it travels inside a record: what
+ * it is made of, and what came of it. The second part is only ever compared with
+ * what comes of it here, see Altered; it may be missing.
+ */
+export interface Curve {
+  /** the user's own: "P22 header, lab HBW" */
+  name?: string;
+  /** key of the impact device that took the readings */
+  device: string;
+  /** key of the metal group */
+  group: string;
+  /** what the pairs' values are in */
+  scale: Key;
+  /** an anchor for up to four pairs, else own, unless told */
+  kind: CurveKind;
+  /** in any order */
+  pairs: Pair[];
+  /** where the values come from; of a table it must be there */
+  source?: string;
+  /** of the instrument that took the readings */
+  serial?: string;
+  /** when they were taken: 2026-12-01 */
+  date?: string;
+  /** of a table: standard uncertainty of its values, percent */
+  u_percent?: number;
+  /** of the data and methods it was fitted with */
+  edition?: string;
+  form?: Form;
+  /** for reading, rounded: "HBW = -212.3 + 0.8741 HLD"; "" for a table */
+  equation?: string;
+  /** least and greatest reading that it is given for */
+  range?: number[];
+  /** the same, rounded inwards */
+  shownRange?: string[];
+  /** see Form; [] for a table */
+  parameters?: number[];
+  /** of the parameters, widened by birge^2; [] for a table */
+  covariance?: number[][];
+  /** pairs less parameters */
+  dof?: number;
+  /** standard deviation of the pairs about the curve, in its scale; null without degrees of freedom */
+  residual?: number | null;
+  /** per degree of freedom, of an anchor with the 3 % of the model's shape; null like it */
+  chiSquare?: number | null;
+  /** what the uncertainty was widened by because of it, 1 or more */
+  birge?: number;
+  /** standard deviation of pieces about the curve that the pairs' uncertainties do not explain, in its scale; 0 unless chi-square is beyond chance (5 %) */
+  scatter?: number;
+  /** root mean square of what each pair differs by from the curve through the others; null but for an own curve */
+  leaveOneOut?: number | null;
+  /** of the form chosen; null but for an own curve */
+  aicc?: number | null;
+  /** the forms that were tried; [] but for an own curve */
+  candidates?: Candidate[];
+  /** of each pair, in their order */
+  residuals?: Residual[];
+  warnings?: Warning[];
+  /** evenly over the range */
+  plot?: PlotPoint[];
+}
+
+/** Fitted is a curve with what came of it. */
+export interface Fitted {
+  /** the user's own: "P22 header, lab HBW" */
+  name?: string;
+  /** key of the impact device that took the readings */
+  device: string;
+  /** key of the metal group */
+  group: string;
+  /** what the pairs' values are in */
+  scale: Key;
+  /** an anchor for up to four pairs, else own, unless told */
+  kind: CurveKind;
+  /** in any order */
+  pairs: Pair[];
+  /** where the values come from; of a table it must be there */
+  source?: string;
+  /** of the instrument that took the readings */
+  serial?: string;
+  /** when they were taken: 2026-12-01 */
+  date?: string;
+  /** of a table: standard uncertainty of its values, percent */
+  u_percent?: number;
+  /** of the data and methods it was fitted with */
+  edition?: string;
+  form: Form;
+  /** for reading, rounded: "HBW = -212.3 + 0.8741 HLD"; "" for a table */
+  equation: string;
+  /** least and greatest reading that it is given for */
+  range: number[];
+  /** the same, rounded inwards */
+  shownRange: string[];
+  /** see Form; [] for a table */
+  parameters: number[];
+  /** of the parameters, widened by birge^2; [] for a table */
+  covariance: number[][];
+  /** pairs less parameters */
+  dof: number;
+  /** standard deviation of the pairs about the curve, in its scale; null without degrees of freedom */
+  residual: number | null;
+  /** per degree of freedom, of an anchor with the 3 % of the model's shape; null like it */
+  chiSquare: number | null;
+  /** what the uncertainty was widened by because of it, 1 or more */
+  birge: number;
+  /** standard deviation of pieces about the curve that the pairs' uncertainties do not explain, in its scale; 0 unless chi-square is beyond chance (5 %) */
+  scatter: number;
+  /** root mean square of what each pair differs by from the curve through the others; null but for an own curve */
+  leaveOneOut: number | null;
+  /** of the form chosen; null but for an own curve */
+  aicc: number | null;
+  /** the forms that were tried; [] but for an own curve */
+  candidates: Candidate[];
+  /** of each pair, in their order */
+  residuals: Residual[];
+  warnings: Warning[];
+  /** evenly over the range */
+  plot: PlotPoint[];
+}
+
+/** Definition is what a curve is made of. */
+export interface Definition {
+  /** the user's own: "P22 header, lab HBW" */
+  name?: string;
+  /** key of the impact device that took the readings */
+  device: string;
+  /** key of the metal group */
+  group: string;
+  /** what the pairs' values are in */
+  scale: Key;
+  /** an anchor for up to four pairs, else own, unless told */
+  kind: CurveKind;
+  /** in any order */
+  pairs: Pair[];
+  /** where the values come from; of a table it must be there */
+  source?: string;
+  /** of the instrument that took the readings */
+  serial?: string;
+  /** when they were taken: 2026-12-01 */
+  date?: string;
+  /** of a table: standard uncertainty of its values, percent */
+  u_percent?: number;
+  /** of the data and methods it was fitted with */
+  edition?: string;
+}
+
+/** CurveKind is the kind of a curve. */
+export type CurveKind = "anchor" | "own" | "table";
+
+/**
+ * Pair is a reading and what it stands for. Of a table, the uncertainties are
+ * not looked at.
+ */
+export interface Pair {
+  /** mean reading, in the device's scale, as if struck vertically down */
+  hl: number;
+  /** its standard uncertainty */
+  u_hl: number;
+  /** in the curve's scale */
+  value: number;
+  /** its standard uncertainty */
+  u_value: number;
+  /** three or more, which hl and u_hl are then computed from */
+  readings?: number[];
+  /** of the piece */
+  label?: string;
+  /** when the reading was taken, unless as the curve's: 2026-12-01 */
+  date?: string;
+}
+
+/** Form is the form of a curve. */
+export type Form = "straight" | "power" | "quadratic" | "anchored" | "table";
+
+/** Candidate is a form that was tried. */
+export interface Candidate {
+  form: Form;
+  /** Akaike's criterion, corrected: the least is chosen; null where refused, and so are the next two */
+  aicc: number | null;
+  /** per degree of freedom */
+  chiSquare: number | null;
+  /** as the fit's */
+  leaveOneOut: number | null;
+  /** code of the reason why it cannot be chosen; "" if it can */
+  refused: string;
+  /** the reason, one sentence */
+  reason: string;
+}
+
+/** Residual is what one pair says of the curve. */
+export interface Residual {
+  /** interval of the reading at 95 % */
+  hlBar: number[];
+  /** interval of the value at 95 % */
+  valueBar: number[];
+  /** the curve at the reading; null where the curve gives none, and so are the next two */
+  fitted: number | null;
+  /** value - fitted */
+  residual: number | null;
+  /** standard uncertainty of the residual from both sides of the pair */
+  standard: number | null;
+  /** value less the curve through the other pairs, in units of its uncertainty; null but for an own curve */
+  leftOut: number | null;
+  /** by how much the pair moves the curve at its reading, in units of the curve's standard uncertainty; null like it */
+  influence: number | null;
+}
+
+/**
+ * Warning is something the user has to know about a curve. It is a finding of
+ * every sheet that the curve is used for.
+ */
+export interface Warning {
+  code: string;
+  /** warn or note */
+  level: Kind;
+  /** path in the curve */
+  field: string;
+  message: string;
+  remedy: string;
+  params: Params;
+  source: string;
+}
+
+/** PlotPoint is a point of the curve. */
+export interface PlotPoint {
+  hl: number;
+  value: number;
+  /** of the band at 95 % */
+  low: number;
+  /** of the band at 95 % */
+  high: number;
+  /** what the built-in model gives there; null where it gives nothing */
+  model: number | null;
+}
+
+/**
  * Record is what was written down about one spot. Only V and Readings must be
  * there; a record may be evaluated while it is still being filled in.
  */
@@ -520,6 +1006,8 @@ export interface Record {
   notes?: string;
   /** the part of a weld */
   zone?: Zone;
+  /** along a traverse, from any point that the whole traverse is measured from */
+  position_mm?: number;
   /** key of the impact device; "" for a direct method */
   device?: string;
   /** of the instrument */
@@ -538,7 +1026,7 @@ export interface Record {
   block?: Block;
   /** what the spot has to meet */
   limit?: Limit;
-  /** must be null, see Curve */
+  /** own curve or anchor as fitCurve gave it, or only what it is made of */
   curve?: Curve;
   /**
    * PermissibleError is how far the instrument may read wrong to either side, in
@@ -583,20 +1071,13 @@ export interface Block {
 export type BlockUse = "uncertainty" | "correction";
 
 /**
- * Curve stands where a record would carry a curve of its own. This edition
- * converts without, and refuses one rather than leave it out of account.
- */
-export interface Curve {
-}
-
-/**
  * Number is a number as it was typed. Text that is no number is kept, so that
  * nothing typed is lost; Value is NaN then.
  */
 export type Number = number | string | null;
 
 /** Basis says what a step of a conversion rests on. */
-export type Basis = "measured" | "model" | "standard" | "similar";
+export type Basis = "measured" | "model" | "standard" | "similar" | "anchored" | "own" | "table";
 
 /** Step is one step of a conversion. */
 export interface Step {
@@ -658,6 +1139,78 @@ export type Coverage = "degrees-of-freedom" | "distributions";
 
 /** Distribution is what is known of the values a term can take. */
 export type Distribution = "normal" | "rectangular" | "student";
+
+/** Request is a table to read, and what is known of it. */
+export interface Request {
+  /** as pasted, or the whole file */
+  text: string;
+  /** between cells: a tab, ";", "|" or ","; found unless told */
+  delimiter?: string;
+  /** found unless told */
+  header?: Header;
+  /** found unless told */
+  layout?: Layout;
+  /** for each column the path of the field that it holds, "limit", "struck", or "" for a column to leave out; guessed unless told */
+  mapping?: string[];
+  /** what headers mean, before the words that are known anyway */
+  known?: ColumnWord[];
+  /** what stands in a record where its row says nothing; id and readings are left out of it */
+  defaults: Record;
+}
+
+/** Header says whether the first row names the columns. */
+export type Header = "yes" | "no";
+
+/** Layout says what a row is. */
+export type Layout = "spot" | "reading";
+
+/** ColumnWord is what a header means. */
+export interface ColumnWord {
+  /** case, spaces and signs do not count */
+  name: string;
+  /** as in a mapping */
+  role: string;
+}
+
+/**
+ * Table is what was read. Every row that is not blank is either in a record or
+ * among the bad ones.
+ */
+export interface Table {
+  /** "" where there is one column */
+  delimiter: string;
+  header: boolean;
+  layout: Layout;
+  columns: Column[];
+  /** the roles of the columns: what to hand in again, changed */
+  mapping: string[];
+  /** that are not blank, without the header */
+  rows: number;
+  records: Record[];
+  /** for each record the number of its row, or of its first; counted from 1, with header and blank rows */
+  at: number[];
+  /** in their order */
+  bad: BadRow[];
+}
+
+/** Column is one column of a table. */
+export interface Column {
+  /** its header; "" without one */
+  name: string;
+  /** "" where it is left out */
+  role: string;
+  /** its first few cells that hold something */
+  samples: string[];
+}
+
+/** BadRow is a row that is in no record. */
+export interface BadRow {
+  /** its number */
+  row: number;
+  cells: string[];
+  /** the field is the role of the column, where one is to blame */
+  error: Error | null;
+}
 
 /** Limit is what a spot has to meet, as it was written down. */
 export interface Limit {

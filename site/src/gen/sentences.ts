@@ -214,6 +214,90 @@ export const sentences: Sentence[] = [
     "source": "Common practice, no source"
   },
   {
+    "code": "wrong-curve",
+    "kind": "stop",
+    "message": "The curve {name} was made with device {curveDevice} on {curveMetal}, but these readings are of {device} on {metal}.",
+    "remedy": "Choose a curve of this device and metal, or remove it from the record.",
+    "source": "ISO 18265: a conversion holds for the metal it was made for; ISO 16859-1: readings of different devices differ"
+  },
+  {
+    "code": "curve-altered",
+    "kind": "stop",
+    "message": "The figures stored with the curve {name} do not follow from its pairs.",
+    "remedy": "Fit the curve anew from its pairs, or ask the sender for the record as it was.",
+    "source": "An own curve is computed again wherever it arrives"
+  },
+  {
+    "code": "curve-unusable",
+    "kind": "stop",
+    "message": "No curve of this edition goes through the pairs of {name}.",
+    "remedy": "Correct its pairs under Curves, or remove it from the record.",
+    "source": "An own curve is computed again wherever it arrives"
+  },
+  {
+    "code": "outside-curve-range",
+    "kind": "stop",
+    "message": "The mean {mean:1} {scale} lies outside the curve {name}, which is given from {lo:1} to {hi:1} {scale}.",
+    "remedy": "Add a pair beyond this reading, or remove the curve and convert without.",
+    "source": "An own curve says nothing outside its pairs"
+  },
+  {
+    "code": "outside-pairs",
+    "kind": "note",
+    "message": "The mean {mean:1} {scale} lies {percent:0} % outside the pairs of the anchor {name}, {lo:1} to {hi:1} {scale}, so its uncertainty is wider.",
+    "remedy": "Add a pair near this hardness.",
+    "source": "Engineering estimate"
+  },
+  {
+    "code": "offset-in-curve",
+    "kind": "note",
+    "message": "The curve {name} was made with this very instrument, serial {serial}, so that the instrument's offset is in the curve, and neither a block check nor a permissible error enters the converted values.",
+    "remedy": "Check the instrument on a block all the same: the curve does not know what has changed since.",
+    "source": "JCGM 100: no influence is counted twice"
+  },
+  {
+    "code": "curve-old",
+    "kind": "warn",
+    "message": "The oldest pair of the curve {name} was taken {days:0} days before these readings.",
+    "remedy": "Measure one of its pieces again, and make the curve anew if it differs.",
+    "source": "Common practice, no source: a year"
+  },
+  {
+    "code": "pairs-bunched",
+    "kind": "warn",
+    "message": "The pairs bunch together: from {from:1} to {to:1} {scale} there is none, {percent:0} % of what they span.",
+    "remedy": "Add a pair in the gap.",
+    "source": "Common practice, no source"
+  },
+  {
+    "code": "pairs-narrow",
+    "kind": "warn",
+    "message": "The pairs span only {span:1} {scale}, from {lo:1} to {hi:1}, so that little is known of how the curve rises.",
+    "remedy": "Add pairs on softer and on harder pieces.",
+    "source": "Common practice, no source"
+  },
+  {
+    "code": "pair-far-off",
+    "kind": "warn",
+    "message": "Pair {pair} ({hl:1}, {value} {scale}) lies {times:1} uncertainties off the curve through the others, and moves the curve by {influence:1} of its own.",
+    "remedy": "Measure that piece again. Remove the pair only for a cause you can see.",
+    "source": "Leave-one-out residual beyond 3 (common practice, no source)"
+  },
+  {
+    "code": "pairs-disagree",
+    "kind": "warn",
+    "message": "The pairs scatter {times:1} times as far about the curve as their uncertainties say, which is beyond chance, so the curve is widened.",
+    "remedy": "Look whether the uncertainties are too small, or the pieces not of one metal and condition.",
+    "source": "Chi-square beyond its 95 % point; R. T. Birge, Phys. Rev. 40 (1932) 207"
+  },
+  {
+    "code": "curve-far-from-model",
+    "kind": "warn",
+    "message": "At {hl:0} {reading} the curve gives {value} {scale}, the built-in model for {metal} {model}: farther apart than both uncertainties explain.",
+    "remedy": "Check the device, the metal and the scale of the pairs.",
+    "source": "Rebound model, engineering estimate"
+  },
+  {
     "code": "bad-limit",
     "kind": "warn",
     "message": "The field {path} must be a number above 0 and at most {hi}, but it is {got}.",
@@ -240,6 +324,27 @@ export const sentences: Sentence[] = [
     "message": "The least value of the limit, {min}, is above its greatest, {max}.",
     "remedy": "Exchange or correct them.",
     "source": "A limit bounds something"
+  },
+  {
+    "code": "form-few-pairs",
+    "kind": "reason",
+    "message": "Pairs: {n}; it takes at least {least}.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "form-no-fit",
+    "kind": "reason",
+    "message": "The pairs do not determine it.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "form-not-rising",
+    "kind": "reason",
+    "message": "It does not rise over the whole range.",
+    "remedy": "",
+    "source": ""
   },
   {
     "code": "scale-below",
@@ -494,6 +599,55 @@ export const sentences: Sentence[] = [
     "source": ""
   },
   {
+    "code": "spots-even",
+    "kind": "ruling",
+    "message": "Even: the {spots} spots, with means from {lo} to {hi}, differ by no more than the readings at each of them scatter (F = {f}, p {p}), so nothing here speaks against one hardness for the whole part.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "spots-uneven",
+    "kind": "ruling",
+    "message": "Uneven: the {spots} spots, with means from {lo} to {hi}, differ by more than the readings at each of them scatter (F = {f}, p {p}), so no single value stands for the whole part: judge each spot by itself.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "spots-too-few",
+    "kind": "ruling",
+    "message": "The spots cannot be compared: it takes at least two, with readings in the same scale on the same metal.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "spots-single",
+    "kind": "ruling",
+    "message": "The spots cannot be compared: none has two readings, so that their scatter is not known.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "spots-no-scatter",
+    "kind": "ruling",
+    "message": "The spots cannot be compared: at each of them all readings are alike, so that their scatter is not known.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "spots-left-out",
+    "kind": "ruling",
+    "message": "Left out of the comparison, because they are read in another scale or on another metal: {n} of {all} spots.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "traverse-peak",
+    "kind": "ruling",
+    "message": "The heat-affected zone is hardest at {spot}: {shown} ± {expanded}.",
+    "remedy": "",
+    "source": ""
+  },
+  {
     "code": "record-not-json",
     "kind": "error",
     "message": "The record is not valid JSON: at {path}, {want} is expected, but there is {got}. Open a record that this program wrote.",
@@ -571,6 +725,13 @@ export const sentences: Sentence[] = [
     "source": ""
   },
   {
+    "code": "too-many-records",
+    "kind": "error",
+    "message": "The field {path} holds {n} records; it takes at most {limit}. Split the book.",
+    "remedy": "",
+    "source": ""
+  },
+  {
     "code": "text-too-long",
     "kind": "error",
     "message": "The field {path} holds {n} characters; at most {limit} are kept. Shorten it.",
@@ -578,9 +739,212 @@ export const sentences: Sentence[] = [
     "source": ""
   },
   {
-    "code": "curve-not-served",
+    "code": "curve-too-large",
     "kind": "error",
-    "message": "The field curve must be null: this edition converts without own curves. Remove the curve.",
+    "message": "The curve is larger than {limit} bytes. Leave out what it does not need.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "curve-not-json",
+    "kind": "error",
+    "message": "The curve is not valid JSON: at {path}, {want} is expected, but there is {got}. Open a curve that this program wrote.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "curve-unknown-field",
+    "kind": "error",
+    "message": "The field {path} is unknown in a curve. Remove it, or open the curve with a newer edition.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "curve-scale",
+    "kind": "error",
+    "message": "The field {path} holds {scale}, which nothing leads on from for {metal}. Give the values in one of: {choices}.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "not-a-date",
+    "kind": "error",
+    "message": "The field {path} must be a date such as 2026-12-01, but it holds {got}. Correct it.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "pairs-none",
+    "kind": "error",
+    "message": "The field {path} holds no pair. Enter at least one.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "pairs-too-many",
+    "kind": "error",
+    "message": "The field {path} holds {n} pairs; it takes at most {most}. Leave some out.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "anchor-many-pairs",
+    "kind": "error",
+    "message": "An anchor takes at most {most} pairs, and there are {n}. Make it an own curve.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "own-few-pairs",
+    "kind": "error",
+    "message": "An own curve takes at least {least} pairs, and there are fewer ({n}). Add pairs, or make it an anchor.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "table-few-points",
+    "kind": "error",
+    "message": "A table takes at least {least} points, and there are fewer ({n}). Add points.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "pair-readings",
+    "kind": "error",
+    "message": "The field {path} holds {n} readings; it takes {least} to {most}. Add readings, or give their mean and its uncertainty.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "pair-certain",
+    "kind": "error",
+    "message": "Neither side of pair {pair} has an uncertainty. Enter that of the reading, of the value, or of both.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "pairs-one-value",
+    "kind": "error",
+    "message": "All pairs have the same value, {value} {scale}, so that no curve rises through them. Add pieces of other hardness, or keep up to four as an anchor.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "pairs-few-places",
+    "kind": "error",
+    "message": "The pairs stand at fewer than {least} different readings. Add pieces of other hardness.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "anchor-no-model",
+    "kind": "error",
+    "message": "Device {device} has no built-in model that could be anchored. Make an own curve of at least {least} pairs.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "anchor-outside-model",
+    "kind": "error",
+    "message": "The field {path} is {got}, but the model of {metal} is given from {lo} to {hi} {scale}. Correct the reading or the metal, or make an own curve.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "anchor-outside-table",
+    "kind": "error",
+    "message": "The field {path} is {got}, but for {metal} {scale} leads to HV only from {lo:1} to {hi:1}. Give the value in another scale, or make an own curve.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "table-no-source",
+    "kind": "error",
+    "message": "The field {path} is empty. Name the standard or report that the table is taken from.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "table-not-rising",
+    "kind": "error",
+    "message": "The table does not rise: at {hl} it gives {value} {scale}, and at {beforeHL} {before}. Correct the field {path}.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "table-outside-device",
+    "kind": "error",
+    "message": "The table covers nothing of {lo} to {hi} {scale}, the application range of device {device}. Correct the device or the points.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "curve-not-rising",
+    "kind": "error",
+    "message": "No form of curve through the pairs gives a {scale} that rises with the reading. Look for a pair that is entered wrong, or add pieces of other hardness.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "table-too-large",
+    "kind": "error",
+    "message": "The text is larger than {limit} bytes. Split it into several.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "table-too-long",
+    "kind": "error",
+    "message": "The table has more than {limit} rows. Split it into several.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "table-too-wide",
+    "kind": "error",
+    "message": "Row {row} has {n} cells, and at most {limit} are read. Check the delimiter.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "row-empty",
+    "kind": "error",
+    "message": "The row has neither a reading nor a label. Add one, or leave the row out.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "row-cell",
+    "kind": "error",
+    "message": "The column {column} must hold {want}, but it holds {got}. Correct the cell, or leave the column out.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "row-limit",
+    "kind": "error",
+    "message": "The limit {got} cannot be read. Write it as max 225 HBW, min 180 HBW or 180 to 225 HBW.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "row-no-reading",
+    "kind": "error",
+    "message": "The row holds no reading. Enter it, or leave the row out.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "row-no-label",
+    "kind": "error",
+    "message": "The row has no label, and no row before it has one either. Name its spot.",
+    "remedy": "",
+    "source": ""
+  },
+  {
+    "code": "row-differs",
+    "kind": "error",
+    "message": "The column {column} holds {got}, but row {first} of the same spot holds {want}. Make them agree, or give the spot another label.",
     "remedy": "",
     "source": ""
   },

@@ -9,6 +9,9 @@ export const look = css`
   * {
     box-sizing: border-box;
   }
+  [hidden] {
+    display: none !important;
+  }
   section {
     background: var(--card);
     border: 1px solid var(--line);

@@ -51,6 +51,11 @@ export const budgetStyle = css`
 `;
 
 export function budget(row: core.Row) {
+  return html`${budgetBars(row)}
+    <div class="scroll" tabindex="0" role="region" aria-label=${say("scale.budget", { scale: row.scale })}>${budgetTable(row)}</div>`;
+}
+
+export function budgetBars(row: core.Row) {
   return html`<ul class="bars" aria-label=${say("budget.bars", { scale: row.scale })}>
       ${row.terms.map(
         (term) => html`<li>
@@ -59,9 +64,11 @@ export function budget(row: core.Row) {
           <span>${say("budget.percent", { percent: term.share * 100 })}</span>
         </li>`,
       )}
-    </ul>
-    <div class="scroll" tabindex="0" role="region" aria-label=${say("scale.budget", { scale: row.scale })}>
-      <table>
+    </ul>`;
+}
+
+export function budgetTable(row: core.Row) {
+  return html`<table>
         <thead>
           <tr>
             <th scope="col">${say("budget.term")}</th>
@@ -84,6 +91,5 @@ export function budget(row: core.Row) {
             </tr>`,
           )}
         </tbody>
-      </table>
-    </div>`;
+      </table>`;
 }

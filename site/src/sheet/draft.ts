@@ -6,11 +6,11 @@ import type * as core from "../gen/contract";
 
 export function blank(like?: core.Record): core.Record {
   // The next spot of a job is measured as the last one was; nothing else is kept.
-  const { device = "D", scale = "HLD", direction = "down", readings, id, label, notes, taken, zone, v, ...setUp } = like ?? {};
+  const { device = "D", scale = "HLD", direction = "down", readings, id, label, notes, taken, zone, position_mm, v, ...setUp } = like ?? {};
   return { ...setUp, v: catalogue.recordVersion, id: newId(), device, scale, direction, readings: [] };
 }
 
-function newId(): string {
+export function newId(): string {
   const letters = crypto.getRandomValues(new Uint8Array(8));
   return Array.from(letters, (n) => (n % 36).toString(36)).join("");
 }
@@ -21,7 +21,7 @@ export const usualPlan = { n: 5, sd: 6 };
 
 /** The spot as it is before any reading, without what nothing depends on. */
 export function spotOf(record: core.Record): core.Record {
-  const { id, label, notes, by, job, zone, taken, ...spot } = record;
+  const { id, label, notes, by, job, zone, position_mm, taken, ...spot } = record;
   return { ...spot, readings: [] };
 }
 

@@ -6,6 +6,8 @@ import { catalogue } from "../gen/catalogue";
 import type * as core from "../gen/contract";
 import { RecordChange } from "../look/events";
 import { look } from "../look/look";
+import type { QuantityChange } from "../look/quantity";
+import "../look/quantity";
 import { say } from "../words/words";
 import { measureWith } from "./draft";
 
@@ -60,6 +62,23 @@ export class SpotElement extends LitElement {
         </select>
       </label>
       ${this.direction()}</div>
+      <div class="pair">
+        <label
+          >${say("spot.zone")}
+          <select id="zone" @change=${(e: Event) => this.change({ zone: (chosen(e) || undefined) as core.Zone | undefined })}>
+            ${["", "base", "haz", "weld", "other"].map(
+              (key) => html`<option value=${key} ?selected=${key === (this.record.zone ?? "")}>${say(`zone.${key || "unsaid"}`)}</option>`,
+            )}
+          </select>
+        </label>
+        <strike-quantity
+          id="position"
+          .label=${say("spot.position")}
+          .unit=${"mm"}
+          .value=${this.record.position_mm}
+          @quantity-change=${(e: QuantityChange) => this.change({ position_mm: e.value })}
+        ></strike-quantity>
+      </div>
     </section>`;
   }
 

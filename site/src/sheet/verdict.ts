@@ -7,7 +7,7 @@ import { look } from "../look/look";
 import { say, sayCode } from "../words/words";
 
 /** A mark that tells the outcomes apart without colour. */
-const marks: { [outcome in core.Outcome]: string } = {
+export const marks: { [outcome in core.Outcome]: string } = {
   conforms: "✓",
   "does-not-conform": "✕",
   "not-proven": "?",

@@ -40,8 +40,14 @@ type Header struct {
 
 // Line is a line of an order.
 type Line struct {
+	*Discount
 	Weight  unit.Weight
 	Reading Reading `json:"reading"`
+}
+
+// Discount is only there where one is given.
+type Discount struct {
+	Percent float64 `json:"percent"`
 }
 
 // State says how far an order has come.

@@ -28,6 +28,7 @@ export interface Order {
 
 /** Line is a line of an order. */
 export interface Line {
+  percent?: number;
   Weight: Weight;
   reading: Reading;
 }
