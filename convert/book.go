@@ -32,7 +32,8 @@ const (
 // *wording.Error.
 func DecodeBook(data []byte) (Book, error) {
 	var b Book
-	return b, decodeBook(data, &b, &b)
+	err := decodeBook(data, &b, &b)
+	return b, err
 }
 
 // decodeBook reads a request that a book is embedded in.

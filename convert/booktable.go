@@ -19,7 +19,8 @@ type TableBook struct {
 // is a *wording.Error.
 func DecodeTableBook(data []byte) (TableBook, error) {
 	var b TableBook
-	return b, decodeBook(data, &b, &b.Book)
+	err := decodeBook(data, &b, &b.Book)
+	return b, err
 }
 
 // resultColumns are the columns behind the fields of a record.

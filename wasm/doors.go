@@ -33,6 +33,8 @@ var doors = map[string]door{
 	"evaluateBook":  {"the JSON of a book, as text", evaluateBook},
 	"evaluateRows":  {"the JSON of a book, as text", evaluateRows},
 	"summarizeRows": {"the JSON of a book's rows, as text", summarizeRows},
+	"readTable":     {"the JSON of a table with what is known of it, as text", readTable},
+	"writeTable":    {"the JSON of a book, as text", writeTable},
 }
 
 func evaluate(text string) (string, error) {

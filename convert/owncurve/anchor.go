@@ -1,7 +1,6 @@
 package owncurve
 
 import (
-	"errors"
 	"math"
 	"strconv"
 
@@ -26,7 +25,7 @@ func (s *Solution) anchor() error {
 	logs, weights := make([]float64, len(pairs)), make([]float64, len(pairs))
 	var sum, weight float64
 	for _, i := range byReading(pairs) {
-		ratio, u, err := s.ratio(i, pairs[i])
+		ratio, u, err := s.ratio(i, &pairs[i])
 		if err != nil {
 			return err
 		}
@@ -65,30 +64,39 @@ func (s *Solution) anchor() error {
 
 // ratio is by how much the hardness of a pair exceeds the model, with its
 // relative standard uncertainty from both sides of the pair.
-func (s *Solution) ratio(i int, p Pair) (ratio, u float64, err error) {
-	model, err1 := s.model.At(p.HL)
-	slope, err2 := curve.MeanSlope(s.model, p.HL, p.UHL)
-	if errors.Join(err1, err2) != nil {
-		lo, hi := s.model.Domain()
-		return 0, 0, wording.NewError("anchor-outside-model", inPair(i, "hl"), wording.Params{
-			"path": inPair(i, "hl"), "got": p.HL, "lo": math.Ceil(lo), "hi": math.Floor(hi), "scale": string(s.readingScale()), "metal": s.group.Name})
+func (s *Solution) ratio(i int, p *Pair) (ratio, u float64, err error) {
+	model, slope, ok := through(s.model, p.HL, p.UHL)
+	if !ok {
+		return 0, 0, s.outside("anchor-outside-model", inPair(i, "hl"), p.HL, s.readingScale(), s.model)
 	}
-	hv, uHV := p.Value, p.UValue
+	hv, perValue := p.Value, 1.0
 	if s.Leg != nil {
 		back, err := s.Leg.Back(s.Leg.Domain())
 		if err != nil {
 			panic(err) // a test turns every leg round
 		}
-		hv, err1 = back.At(p.Value)
-		per, err2 := curve.MeanSlope(back, p.Value, p.UValue)
-		if errors.Join(err1, err2) != nil {
-			lo, hi := back.Domain()
-			return 0, 0, wording.NewError("anchor-outside-table", inPair(i, "value"), wording.Params{
-				"path": inPair(i, "value"), "got": p.Value, "lo": lo, "hi": hi, "scale": string(s.Definition.Scale), "metal": s.group.Name})
+		if hv, perValue, ok = through(back, p.Value, p.UValue); !ok {
+			return 0, 0, s.outside("anchor-outside-table", inPair(i, "value"), p.Value, s.Definition.Scale, back)
 		}
-		uHV *= per
 	}
-	return hv / model, math.Hypot(uHV/hv, slope*p.UHL/model), nil
+	return hv / model, math.Hypot(perValue*p.UValue/hv, slope*p.UHL/model), nil
+}
+
+// through leads x, which is uncertain by u, over a curve. ok is false outside it.
+func through(c curve.Curve, x, u float64) (value, slope float64, ok bool) {
+	value, err := c.At(x)
+	if err != nil {
+		return 0, 0, false
+	}
+	slope, err = curve.MeanSlope(c, x, u)
+	return value, slope, err == nil
+}
+
+// outside refuses a number that an anchor's curve is not given for.
+func (s *Solution) outside(code, field string, got float64, scale scale.Key, c curve.Curve) error {
+	lo, hi := c.Domain()
+	return wording.NewError(code, field, wording.Params{
+		"path": field, "got": got, "lo": lo, "hi": hi, "scale": string(scale), "metal": s.group.Name})
 }
 
 // widen takes chi-square into account: by the Birge ratio where it exceeds its

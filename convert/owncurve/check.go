@@ -78,21 +78,24 @@ func shorten(text string) string {
 // stands before each path. An error is a *wording.Error that names the first such
 // field.
 func (d Definition) Check(prefix string) error {
-	c := checker{prefix}
-	for _, check := range []func(Definition) error{c.choices, c.texts, c.number, c.pairs, c.kind} {
-		if err := check(d); err != nil {
+	c := checker{prefix, d.filled()}
+	for _, check := range []func() error{c.choices, c.texts, c.number, c.eachPair, c.kind} {
+		if err := check(); err != nil {
 			return err
 		}
-		d = d.filled()
 	}
 	return nil
 }
 
-// checker checks definitions that stand behind a prefix.
-type checker struct{ prefix string }
+// checker checks a definition, with what it leaves open filled in, that stands
+// behind a prefix.
+type checker struct {
+	prefix string
+	Definition
+}
 
 // fault makes an error at a field.
-func (c checker) fault(code, field string, params wording.Params) error {
+func (c *checker) fault(code, field string, params wording.Params) error {
 	if params == nil {
 		params = wording.Params{}
 	}
@@ -101,7 +104,7 @@ func (c checker) fault(code, field string, params wording.Params) error {
 }
 
 // within refuses a number outside bounds, or that is none.
-func (c checker) within(field string, got, lo, hi float64) error {
+func (c *checker) within(field string, got, lo, hi float64) error {
 	if got >= lo && got <= hi {
 		return nil
 	}
@@ -109,14 +112,14 @@ func (c checker) within(field string, got, lo, hi float64) error {
 }
 
 // oneOf refuses what is none of the choices.
-func (c checker) oneOf(field, got string, choices []string) error {
+func (c *checker) oneOf(field, got string, choices []string) error {
 	if slices.Contains(choices, got) {
 		return nil
 	}
 	return c.fault("unknown-choice", field, wording.Params{"got": shorten(strconv.Quote(got)), "choices": strings.Join(choices, ", ")})
 }
 
-func (c checker) choices(d Definition) error {
+func (c *checker) choices() error {
 	var devices, groups []string
 	for _, d := range device.All() {
 		devices = append(devices, d.Key)
@@ -124,35 +127,33 @@ func (c checker) choices(d Definition) error {
 	for _, g := range metal.All() {
 		groups = append(groups, g.Key)
 	}
-	if err := c.oneOf("device", d.Device, devices); err != nil {
+	if err := c.oneOf("device", c.Device, devices); err != nil {
 		return err
 	}
-	if err := c.oneOf("group", d.Group, groups); err != nil {
+	if err := c.oneOf("group", c.Group, groups); err != nil {
 		return err
 	}
-	g, _ := metal.ByKey(d.Group)
+	g, _ := metal.ByKey(c.Group)
 	scales := []string{string(scale.HV)}
 	for _, leg := range scale.Legs(g) {
 		scales = append(scales, string(leg.Scale.Key))
 	}
-	if _, known := scale.ByKey(d.Scale); known && !slices.Contains(scales, string(d.Scale)) {
+	if _, known := scale.ByKey(c.Scale); known && !slices.Contains(scales, string(c.Scale)) {
 		return c.fault("curve-scale", "scale", wording.Params{
-			"scale": string(d.Scale), "metal": g.Name, "choices": strings.Join(scales, ", ")})
+			"scale": string(c.Scale), "metal": g.Name, "choices": strings.Join(scales, ", ")})
 	}
-	if err := c.oneOf("scale", string(d.Scale), scales); err != nil {
+	if err := c.oneOf("scale", string(c.Scale), scales); err != nil {
 		return err
 	}
-	if d.Kind == "" {
-		return nil
-	}
-	return c.oneOf("kind", string(d.Kind), []string{string(Anchor), string(Own), string(Table)})
+	return c.oneOf("kind", string(c.Kind), []string{string(Anchor), string(Own), string(Table)})
 }
 
-func (c checker) texts(d Definition) error {
+func (c *checker) texts() error {
 	type text struct{ field, text string }
-	texts := []text{{"name", d.Name}, {"source", d.Source}, {"serial", d.Serial}, {"edition", d.Edition}}
-	dates := []text{{"date", d.Date}}
-	for i, p := range d.Pairs {
+	texts := []text{{"name", c.Name}, {"source", c.Source}, {"serial", c.Serial}, {"edition", c.Edition}}
+	dates := []text{{"date", c.Date}}
+	for i := range c.Pairs {
+		p := &c.Pairs[i]
 		texts = append(texts, text{inPair(i, "label"), p.Label})
 		dates = append(dates, text{inPair(i, "date"), p.Date})
 	}
@@ -172,33 +173,34 @@ func (c checker) texts(d Definition) error {
 func inPair(i int, field string) string { return fmt.Sprintf("pairs[%d].%s", i, field) }
 
 // number checks that there are as many pairs as the kind takes.
-func (c checker) number(d Definition) error {
-	n := len(d.Pairs)
+func (c *checker) number() error {
+	n := len(c.Pairs)
 	params := wording.Params{"n": float64(n), "least": float64(leastOwn), "most": float64(mostAnchors)}
 	switch {
 	case n == 0:
 		return c.fault("pairs-none", "pairs", nil)
 	case n > mostPairs:
 		return c.fault("pairs-too-many", "pairs", wording.Params{"n": float64(n), "most": float64(mostPairs)})
-	case d.Kind == Anchor && n > mostAnchors:
+	case c.Kind == Anchor && n > mostAnchors:
 		return c.fault("anchor-many-pairs", "kind", params)
-	case d.Kind == Own && n < leastOwn:
+	case c.Kind == Own && n < leastOwn:
 		return c.fault("own-few-pairs", "kind", params)
-	case d.Kind == Table && n < leastTable:
+	case c.Kind == Table && n < leastTable:
 		return c.fault("table-few-points", "pairs", wording.Params{"n": float64(n), "least": float64(leastTable)})
 	}
 	return nil
 }
 
 // pairs checks each pair by itself.
-func (c checker) pairs(d Definition) error {
-	body, _ := device.ByKey(d.Device)
+func (c *checker) eachPair() error {
+	body, _ := device.ByKey(c.Device)
 	lo, hi := body.Lo, body.Hi
-	if d.Kind == Table {
+	if c.Kind == Table {
 		lo, hi = 1, mostHL // what lies outside the device's range is not used
 	}
-	s, _ := scale.ByKey(d.Scale)
-	for i, p := range d.Pairs {
+	s, _ := scale.ByKey(c.Scale)
+	for i := range c.Pairs {
+		p := &c.Pairs[i]
 		for j, r := range p.Readings {
 			if err := c.within(fmt.Sprintf("pairs[%d].readings[%d]", i, j), r, 1, mostHL); err != nil {
 				return err
@@ -215,7 +217,7 @@ func (c checker) pairs(d Definition) error {
 		if err := c.within(inPair(i, "value"), p.Value, max(1, s.Lo), min(s.Hi, mostValue)); err != nil {
 			return err
 		}
-		if d.Kind == Table {
+		if c.Kind == Table {
 			continue
 		}
 		if err := c.within(inPair(i, "u_hl"), p.UHL, 0, p.HL); err != nil {
@@ -231,7 +233,7 @@ func (c checker) pairs(d Definition) error {
 	return nil
 }
 
-func (c checker) count(field string, n int) error {
+func (c *checker) count(field string, n int) error {
 	if n < leastTaken || n > mostTaken {
 		return c.fault("pair-readings", field, wording.Params{"n": float64(n), "least": float64(leastTaken), "most": float64(mostTaken)})
 	}
@@ -239,43 +241,44 @@ func (c checker) count(field string, n int) error {
 }
 
 // kind checks what only one kind of curve asks of its pairs.
-func (c checker) kind(d Definition) error {
-	switch d.Kind {
+func (c *checker) kind() error {
+	switch c.Kind {
 	case Anchor:
-		if body, _ := device.ByKey(d.Device); !body.BuiltInCurve {
-			return c.fault("anchor-no-model", "kind", wording.Params{"device": d.Device, "least": float64(leastOwn)})
+		if body, _ := device.ByKey(c.Device); !body.BuiltInCurve {
+			return c.fault("anchor-no-model", "kind", wording.Params{"device": c.Device, "least": float64(leastOwn)})
 		}
 		return nil
 	case Own:
-		return c.spread(d)
+		return c.spread()
 	}
-	if err := c.within("u_percent", d.UPercent, leastPercent, mostPercent); err != nil {
+	if err := c.within("u_percent", c.UPercent, leastPercent, mostPercent); err != nil {
 		return err
 	}
-	if strings.TrimSpace(d.Source) == "" {
+	if strings.TrimSpace(c.Source) == "" {
 		return c.fault("table-no-source", "source", nil)
 	}
-	order := byReading(d.Pairs)
+	order := byReading(c.Pairs)
 	for n, i := range order[1:] {
-		before, p := d.Pairs[order[n]], d.Pairs[i]
+		before, p := &c.Pairs[order[n]], &c.Pairs[i]
 		if !(p.HL > before.HL && p.Value > before.Value) {
 			return c.fault("table-not-rising", inPair(i, "value"), wording.Params{
-				"hl": p.HL, "value": p.Value, "beforeHL": before.HL, "before": before.Value, "scale": string(d.Scale)})
+				"hl": p.HL, "value": p.Value, "beforeHL": before.HL, "before": before.Value, "scale": string(c.Scale)})
 		}
 	}
 	return nil
 }
 
 // spread checks that the pairs of an own curve stand at different places.
-func (c checker) spread(d Definition) error {
+func (c *checker) spread() error {
 	hls, values := map[float64]bool{}, map[float64]bool{}
-	for _, p := range d.Pairs {
+	for i := range c.Pairs {
+		p := &c.Pairs[i]
 		hls[p.HL], values[p.Value] = true, true
 	}
 	const leastPlaces = 3
 	switch {
 	case len(values) == 1:
-		return c.fault("pairs-one-value", "pairs", wording.Params{"value": d.Pairs[0].Value, "scale": string(d.Scale)})
+		return c.fault("pairs-one-value", "pairs", wording.Params{"value": c.Pairs[0].Value, "scale": string(c.Scale)})
 	case len(hls) < leastPlaces:
 		return c.fault("pairs-few-places", "pairs", wording.Params{"n": float64(len(hls)), "least": float64(leastPlaces)})
 	}

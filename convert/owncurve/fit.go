@@ -84,7 +84,6 @@ func (s *Solution) use(f *fitted, pairs []Pair, order []int) {
 	s.Fit.Equation = f.equation(string(s.Definition.Scale), string(s.readingScale()), s.Fit.Parameters)
 	s.Curve = curve.Law{Lo: s.lo, Hi: s.hi, Value: f.value, Derivative: f.slope}
 	s.standard = func(hl, _ float64) float64 { return math.Hypot(birge*f.standard(hl), scatter) }
-	s.Fit.Residuals = make([]Residual, len(pairs))
 	for n, i := range order {
 		without, p := f.without(n, pairs), &pairs[n]
 		if without == nil {
@@ -102,13 +101,13 @@ func (s *Solution) use(f *fitted, pairs []Pair, order []int) {
 type fitted struct {
 	form      Form
 	line      *stats.Polynomial // of a power, in the logarithms
-	chiSquare float64          // in the coordinates of the pairs, so that forms compare
+	chiSquare float64           // in the coordinates of the pairs, so that forms compare
 	dof       int
 }
 
 // fitForm fits a form. Where it cannot be used, refused is the code of the reason.
 func fitForm(form Form, pairs []Pair) (f *fitted, refused string) {
-	code := ""
+	var code string
 	switch f = fitPairs(form, pairs); {
 	case form == Quadratic && len(pairs) < leastQuadratic:
 		code = "form-few-pairs"

@@ -24,6 +24,7 @@ type Solution struct {
 	Definition  Definition // with what was left open filled in
 	Fit         Fit        // without plot
 
+	body     device.Device
 	group    metal.Group
 	scale    scale.Scale
 	model    curve.Curve // the built-in one of device and metal; nil where there is none
@@ -79,32 +80,34 @@ type solved struct {
 func newSolution(d Definition) *Solution {
 	s := &Solution{
 		Definition: d, To: d.Scale, dof: stats.Infinite, lo: math.Inf(1), hi: math.Inf(-1),
+		// Lists are never nil, so that a curve comes back from its JSON as it was.
 		Fit: Fit{
-			Range: []float64{}, ShownRange: []string{}, Parameters: []float64{}, Covariance: [][]float64{}, Birge: 1,
-			Candidates: []Candidate{}, Residuals: []Residual{}, Warnings: []Warning{}, Plot: []PlotPoint{},
+			Parameters: []float64{}, Covariance: [][]float64{}, Birge: 1,
+			Candidates: []Candidate{}, Warnings: []Warning{}, Plot: []PlotPoint{}, Residuals: make([]Residual, len(d.Pairs)),
 		},
 	}
 	s.group, _ = metal.ByKey(d.Group)
 	s.scale, _ = scale.ByKey(d.Scale)
-	for _, leg := range scale.Legs(s.group) {
-		if leg.Scale.Key == d.Scale {
-			s.Leg = &leg
+	legs := scale.Legs(s.group)
+	for i := range legs {
+		if legs[i].Scale.Key == d.Scale {
+			s.Leg = &legs[i]
 		}
 	}
-	body, _ := device.ByKey(d.Device)
-	if body.BuiltInCurve {
-		leg, err := rebound.For(body, s.group)
+	s.body, _ = device.ByKey(d.Device)
+	if s.body.BuiltInCurve {
+		leg, err := rebound.For(s.body, s.group)
 		if err != nil {
 			panic(err) // a test solves the model for every device and group there is
 		}
-		within, err := curve.Narrow(leg, body.Lo, body.Hi)
+		within, err := curve.Narrow(leg, s.body.Lo, s.body.Hi)
 		if err != nil {
 			panic(err) // a test holds that every group meets every device's range
 		}
 		s.model, s.byModel = within, leg
 	}
-	for _, p := range d.Pairs {
-		s.lo, s.hi = min(s.lo, p.HL), max(s.hi, p.HL)
+	for i := range d.Pairs {
+		s.lo, s.hi = min(s.lo, d.Pairs[i].HL), max(s.hi, d.Pairs[i].HL)
 	}
 	return s
 }
@@ -123,35 +126,31 @@ func (s *Solution) solve() error {
 		return err
 	}
 	lo, hi := s.Domain()
-	hl, _ := scale.ByKey(s.readingScale())
-	s.Fit.Range, s.Fit.ShownRange = []float64{lo, hi}, []string{hl.QuoteUp(lo), hl.QuoteDown(hi)}
+	reading, _ := scale.ByKey(s.readingScale())
+	s.Fit.Range, s.Fit.ShownRange = []float64{lo, hi}, []string{reading.QuoteUp(lo), reading.QuoteDown(hi)}
 	s.describePairs()
 	s.warn()
 	return nil
 }
 
 // readingScale is the scale of the device's readings.
-func (s *Solution) readingScale() scale.Key {
-	body, _ := device.ByKey(s.Definition.Device)
-	return scale.Key(body.Scale)
-}
+func (s *Solution) readingScale() scale.Key { return scale.Key(s.body.Scale) }
 
 // table goes through the points as they are.
 func (s *Solution) table() error {
 	var hls, values []float64
 	for _, i := range byReading(s.Definition.Pairs) {
-		p := s.Definition.Pairs[i]
+		p := &s.Definition.Pairs[i]
 		hls, values = append(hls, p.HL), append(values, p.Value)
 	}
 	through, err := curve.NewTable(hls, values)
 	if err != nil {
 		return err // Check has passed the points
 	}
-	body, _ := device.ByKey(s.Definition.Device)
-	within, err := curve.Narrow(through, body.Lo, body.Hi)
+	within, err := curve.Narrow(through, s.body.Lo, s.body.Hi)
 	if err != nil {
 		return wording.NewError("table-outside-device", "pairs", wording.Params{
-			"lo": body.Lo, "hi": body.Hi, "scale": body.Scale, "device": body.Key})
+			"lo": s.body.Lo, "hi": s.body.Hi, "scale": s.body.Scale, "device": s.body.Key})
 	}
 	s.Curve, s.Fit.Form = within, Tabulated
 	s.lo, s.hi = within.Domain()
@@ -296,21 +295,19 @@ func (s *Solution) plot() []PlotPoint {
 func (s *Solution) describePairs() {
 	k := stats.StudentFactor(bandConfidence, math.Inf(1))
 	bar := func(v, u float64) []float64 { return []float64{v - k*u, v + k*u} }
-	if len(s.Fit.Residuals) == 0 {
-		s.Fit.Residuals = make([]Residual, len(s.Definition.Pairs))
-	}
 	sum := 0.0
-	for i, p := range s.Definition.Pairs {
-		r := &s.Fit.Residuals[i]
+	for i := range s.Definition.Pairs {
+		p, r := &s.Definition.Pairs[i], &s.Fit.Residuals[i]
+		uHL, uValue := p.UHL, p.UValue
 		if s.Definition.Kind == Table {
-			p.UHL, p.UValue = 0, s.Definition.UPercent/100*p.Value
+			uHL, uValue = 0, s.Definition.UPercent/100*p.Value
 		}
-		r.HLBar, r.ValueBar = bar(p.HL, p.UHL), bar(p.Value, p.UValue)
+		r.HLBar, r.ValueBar = bar(p.HL, uHL), bar(p.Value, uValue)
 		fitted, _, ok := s.at(p.HL)
 		if !ok {
 			continue
 		}
-		residual, standard := p.Value-fitted, math.Hypot(p.UValue, s.slopeAt(p.HL)*p.UHL)
+		residual, standard := p.Value-fitted, math.Hypot(uValue, s.slopeAt(p.HL)*uHL)
 		r.Fitted, r.Residual, r.Standard = &fitted, &residual, &standard
 		sum += residual * residual
 	}

@@ -62,7 +62,7 @@ func (s *Solution) warnOfFarPair() {
 	if worst < 0 || math.Abs(*s.Fit.Residuals[worst].LeftOut) <= farOff {
 		return
 	}
-	p, r := s.Definition.Pairs[worst], s.Fit.Residuals[worst]
+	p, r := &s.Definition.Pairs[worst], &s.Fit.Residuals[worst]
 	s.find("pair-far-off", inPair(worst, "value"), wording.Params{
 		"pair": float64(worst + 1), "hl": p.HL, "value": p.Value, "scale": string(s.Definition.Scale),
 		"times": math.Abs(*r.LeftOut), "influence": math.Abs(*r.Influence)})

@@ -118,6 +118,12 @@ func (r *reader) value(v reflect.Value) error {
 		text, err := r.text()
 		v.SetString(string(text))
 		return err
+	case reflect.Bool:
+		if first != 't' && first != 'f' {
+			return r.wrong(start, "true or false")
+		}
+		v.SetBool(first == 't')
+		return r.word(strconv.FormatBool(first == 't'))
 	case reflect.Int:
 		literal, err := r.number("a whole number")
 		if err != nil {

@@ -37,6 +37,8 @@ func sameReadEverywhere(t *testing.T, value string) {
 	t.Helper()
 	sameRead[string](t, value)
 	sameRead[int](t, value)
+	sameRead[bool](t, value)
+	sameRead[[]bool](t, "["+value+"]")
 	sameRead[float64](t, value)
 	sameRead[*float64](t, value)
 	sameRead[[]float64](t, value)

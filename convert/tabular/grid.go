@@ -103,7 +103,10 @@ func detect(text string) byte {
 		rows := split(text, delimiters[i], few)
 		widths := map[int]int{}
 		for _, r := range rows {
-			widths[len(r.cells)]++
+			// A cell that begins with a quote was cut in the middle.
+			if !slices.ContainsFunc(r.cells, func(cell string) bool { return strings.HasPrefix(cell, `"`) }) {
+				widths[len(r.cells)]++
+			}
 		}
 		for width, n := range widths {
 			if width > 1 && n > most && !(delimiters[i] == ',' && width == 2 && decimals(rows)) {

@@ -234,10 +234,21 @@ func (t *reader) hasHeader() bool {
 		return t.asked.Header == WithHeader && len(t.rows) > 0
 	}
 	first := t.rows[0].cells
-	if slices.ContainsFunc(first, func(cell string) bool { return t.roleOf(cell) != "" }) {
+	if slices.ContainsFunc(first, t.isName) {
 		return true
 	}
 	return len(t.rows) > 1 && !slices.ContainsFunc(first, isNumber) && slices.ContainsFunc(t.rows[1].cells, isNumber)
+}
+
+// isName reports whether a cell is a word for a column.
+func (t *reader) isName(cell string) bool {
+	plain := plainWord(cell)
+	for _, kind := range []string{"extreme", "spare", "statistics"} {
+		if words()[word{kind, plain}] != "" {
+			return true
+		}
+	}
+	return t.roleOf(cell) != ""
 }
 
 func isNumber(cell string) bool {
@@ -364,12 +375,19 @@ func (t *reader) layout() Layout {
 		return ReadingARow
 	}
 	seen := map[string]bool{}
-	for i, r := range t.rows {
+	blank := 0
+	for _, r := range t.rows {
 		name := cellOf(r, label)
-		if i > 0 && (name == "" || seen[name]) {
+		switch {
+		case name == "":
+			blank++
+		case seen[name]:
 			return ReadingARow
 		}
 		seen[name] = true
+	}
+	if blank > 0 && blank >= len(t.rows)/3 && cellOf(t.rows[0], label) != "" {
+		return ReadingARow // the label stands beside the first reading alone
 	}
 	return SpotARow
 }

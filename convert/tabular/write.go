@@ -29,7 +29,7 @@ func AppendRow(b []byte, cells []string) []byte {
 
 // plain reports whether a cell needs no quotes, to any reader.
 func plain(cell string) bool {
-	if cell != strings.TrimSpace(cell) {
+	if cell != strings.TrimSpace(cell) || strings.HasPrefix(cell, "{") {
 		return false
 	}
 	for i := range len(cell) {

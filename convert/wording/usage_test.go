@@ -13,7 +13,7 @@ import (
 )
 
 // says are the functions that take the code of a sentence, and where.
-var says = map[string]int{"NewError": 0, "Say": 0, "find": 0, "fault": 0, "refuse": 1, "say": 1}
+var says = map[string]int{"NewError": 0, "Say": 0, "find": 0, "fault": 0, "outside": 0, "refuse": 1, "say": 1}
 
 // putTogether are the codes that the sources put together from a beginning and
 // what is only known when they run.

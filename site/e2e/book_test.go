@@ -15,6 +15,7 @@ import (
 
 	"github.com/chromedp/cdproto/browser"
 	"github.com/chromedp/cdproto/cdp"
+	"github.com/chromedp/cdproto/emulation"
 	"github.com/chromedp/cdproto/page"
 	"github.com/chromedp/cdproto/storage"
 	"github.com/chromedp/chromedp"
@@ -179,6 +180,21 @@ func (w *window) print(name string, width, height float64) []string {
 	return pages
 }
 
+// onPaper keeps a picture of the page as it would be printed.
+func (w *window) onPaper(name string) {
+	w.t.Helper()
+	media := func(kind string) {
+		ctx, cancel := context.WithTimeout(w.ctx, actionTimeout)
+		defer cancel()
+		if _, err := chromedp.Call(ctx, emulation.SetEmulatedMedia, emulation.SetEmulatedMediaParams{Media: kind}); err != nil {
+			w.fail("cannot change the medium: %v", err)
+		}
+	}
+	media("print")
+	w.screenshot(name)
+	media("")
+}
+
 // The report holds what a reader of the paper must know, and its pages end where
 // a spot ends.
 func TestBookReport(t *testing.T) {
@@ -206,6 +222,7 @@ func TestBookReport(t *testing.T) {
 	w.checkAccessible("the report in pages")
 	w.screenshot("report-pages")
 	pages := w.print("report-pages", 8.27, 11.69)
+	w.onPaper("report-page-on-paper")
 	for i, want := range [][]string{
 		{"W1 base", "1 of 3"}, {"W1 HAZ", "2 of 3"}, {"W1 weld", "3 of 3"},
 	} {
@@ -271,7 +288,20 @@ func (w *window) takeFile(name, text string) {
 	eval[bool](w, fmt.Sprintf(`((field) => {
 		const files = new DataTransfer(); files.items.add(new File([%s], %q));
 		field.files = files.files; field.dispatchEvent(new Event("change")); return true })(%s)`, quoted, name, element(takePart+" >>> #files")))
-	w.waitFor(element(takePart + " >>> #offer"))
+	w.progress(element(takePart + " >>> #offer"))
+}
+
+// progress waits for what may take long, as long as the page says that it goes on.
+func (w *window) progress(expression string) {
+	w.t.Helper()
+	const bar = takePart + " >>> progress"
+	for before := -1; !eval[bool](w, "Boolean("+expression+")"); time.Sleep(pollInterval) {
+		done := eval[int](w, "("+element(bar)+"?.value ?? 0)")
+		if done == before {
+			w.waitFor(fmt.Sprintf("(%s) || %s?.value > %d", expression, element(bar), done))
+		}
+		before = done
+	}
 }
 
 // A file of the Book restores all of it in another browser, which writes the
@@ -528,7 +558,7 @@ func TestBookQuota(t *testing.T) {
 	w.focus(label)
 	w.keys("N2")
 	w.focus(entry)
-	w.keys("500501502")
+	w.keys("503503503")
 	for range 20 {
 		w.keys(strings.Repeat("503", 20))
 	}
@@ -536,7 +566,7 @@ func TestBookQuota(t *testing.T) {
 	w.checkAccessible("a full disk")
 	w.screenshot("book-full")
 	text := w.download("Strikebook.json", func() { w.click(app + " >>> #unkept-export") })
-	for _, want := range []string{`"N1"`, `"N2"`, `{"value":502}`} {
+	for _, want := range []string{`"N1"`, `"N2"`, `{"value":503}`} {
 		if !strings.Contains(text, want) {
 			t.Errorf("the file lacks %s:\n%s", want, text)
 		}
@@ -577,5 +607,178 @@ func TestBookForeignSheet(t *testing.T) {
 	w.checkAccessible("an empty Book")
 	w.click(app + " >>> #foreign-keep")
 	w.waitForText(count, "of 1")
+	w.checkClean(s)
+}
+
+// A table with rows that are wrong: each is named with the reason, and the good
+// ones can be taken. What the user says of a column is remembered.
+func TestBookTakesTable(t *testing.T) {
+	s := startSite(t, serve.Options{})
+	w := visit(t, s, phone)
+	w.choose(metal, "low-alloy-steel")
+	w.goTo("book")
+	table := "Where;Zone;r1;r2;r3\r\nN1;haz;432;428,5;435\r\nN2;nowhere;500;501;502\r\nN3;weld;610;612;608\r\n"
+	w.takeFile("spots.csv", table)
+	w.waitForText(takePart+" >>> #offer", "Can be taken: 2 spots")
+	w.waitForText(takePart+" >>> #bad-rows", "spots.csv, row 3")
+	w.waitForText(takePart+" >>> #bad-rows", "nowhere")
+	w.waitForText(takePart+" >>> #defaults", "cast steel")
+	w.checkAccessible("the preview of a table")
+	w.reveal(takePart + " >>> #good")
+	w.screenshot("take-table-phone")
+	if wide := eval[int](w, "document.documentElement.scrollWidth"); wide > 360 {
+		t.Errorf("the preview is %d px wide on a phone of 360", wide)
+	}
+	const first = takePart + " >>> #column-0-0"
+	w.choose(first, "by")
+	w.waitFor(element(first) + ".value === 'by' && !" + element(takePart+" >>> progress"))
+	w.choose(first, "label")
+	w.waitFor(element(first) + ".value === 'label' && " + element(takePart+" >>> #take"))
+	w.click(takePart + " >>> #take")
+	w.waitForText(count, "of 2")
+	w.waitForText(rows, "N1")
+	w.waitForText(rows, "HV (HLD) ±")
+	// Nothing but the readings: the user names the columns once.
+	odd := "Ort\tWert A\tWert B\nX1\t432\t428\nX2\t433\t431\n"
+	w.takeText(odd)
+	w.choose(takePart+" >>> #column-0-0", "label")
+	w.waitFor(element(takePart+" >>> #column-0-0") + "?.value === 'label'")
+	w.choose(takePart+" >>> #column-0-1", "readings")
+	w.waitFor(element(takePart+" >>> #column-0-1") + "?.value === 'readings'")
+	w.choose(takePart+" >>> #column-0-2", "readings")
+	w.waitForText(takePart+" >>> #offer", "Can be taken: 2 spots")
+	w.click(takePart + " >>> #take")
+	w.waitForText(count, "of 4")
+	w.takeText(odd)
+	for column, role := range []string{"label", "readings", "readings"} {
+		if got := eval[string](w, element(fmt.Sprintf("%s >>> #column-0-%d", takePart, column))+".value"); got != role {
+			t.Errorf("column %d is remembered as %q, want %q", column, got, role)
+		}
+	}
+	w.click(takePart + " >>> #drop")
+	w.checkClean(s)
+}
+
+// What goes out as CSV does no harm in a spreadsheet, and comes in again.
+func TestBookCsv(t *testing.T) {
+	s := startSite(t, serve.Options{})
+	w := visit(t, s, desktop)
+	w.choose(metal, "low-alloy-steel")
+	w.addSpot("=1+2", "432428435")
+	w.goTo("book")
+	w.waitForText(count, "of 1")
+	w.unfoldBook(givePart)
+	csv := w.download("First-job.csv", func() { w.click(givePart + " >>> #csv") })
+	if !strings.Contains(csv, "'=1+2") || !strings.Contains(csv, "432") {
+		t.Errorf("the CSV is\n%s", csv)
+	}
+	w.takeFile("again.csv", csv)
+	w.waitForText(takePart+" >>> #offer", "Can be taken: 1 spots")
+	w.click(takePart + " >>> #take")
+	w.waitForText(count, "of 2")
+	if both := eval[string](w, "[..."+element(rows)+".querySelectorAll('.name')].map(e => e.innerText).join()"); both != "=1+2,=1+2" {
+		t.Errorf("the labels read %s", both)
+	}
+}
+
+// manySpots is a table of spots that anybody can make up.
+func manySpots(n int) string {
+	var b strings.Builder
+	b.WriteString("label,zone,r1,r2,r3,r4,r5\n")
+	for i := range n {
+		fmt.Fprintf(&b, "Bolt %05d,%s", i+1, []string{"base", "haz", "weld"}[i%3])
+		for j := range 5 {
+			fmt.Fprintf(&b, ",%d", 420+(i*7+j*13)%60)
+		}
+		b.WriteByte('\n')
+	}
+	return b.String()
+}
+
+// takeMany brings spots in and waits until all are evaluated and shown.
+func (w *window) takeMany(n int) {
+	w.t.Helper()
+	w.takeFile("many.csv", manySpots(n))
+	w.waitForText(takePart+" >>> #offer", fmt.Sprintf("Can be taken: %d spots", n))
+	w.click(takePart + " >>> #take")
+	w.waitForText(count, fmt.Sprintf("of %d", n))
+	w.waitFor(element(book + " >>> strike-summary >>> #counts"))
+}
+
+// Of thousands of spots only those in view are drawn, the page answers while they
+// are evaluated, and the evaluation can be stopped.
+func TestBookOfThousands(t *testing.T) {
+	const n = 3000
+	s := startSite(t, serve.Options{})
+	w := visit(t, s, phone)
+	w.choose(metal, "low-alloy-steel")
+	w.choose(limit+" >>> #pick", "pwht-p3-p4")
+	w.goTo("book")
+	w.takeMany(n)
+	if drawn := eval[int](w, element(rows)+".childElementCount"); drawn > 40 {
+		t.Errorf("%d rows are drawn", drawn)
+	}
+	w.focus(rows + " [data-at='0'] .open")
+	w.keys(kb.End)
+	w.waitForText(rows, fmt.Sprintf("Bolt %05d", n))
+	w.checkAccessible("the end of a long list")
+	w.screenshot("book-long")
+
+	// Opened again, everything is evaluated anew: meanwhile the page answers.
+	w.reload()
+	w.goTo("book")
+	w.click(book + " >>> #cancel")
+	w.waitFor(element(book + " >>> #resume"))
+	done := eval[int](w, element(book+" >>> #evaluating progress")+".value")
+	if done >= n {
+		t.Errorf("%d of %d are evaluated", done, n)
+	}
+	w.checkAccessible("a stopped evaluation")
+	w.click(book + " >>> #resume")
+	w.waitFor("!" + element(book+" >>> #evaluating"))
+	w.checkClean(s)
+}
+
+// BenchmarkBookOfThousands brings in 10,000 spots, evaluates and shows them, and
+// says how long the page was deaf at most meanwhile.
+func BenchmarkBookOfThousands(b *testing.B) {
+	s := startSite(b, serve.Options{})
+	var total time.Duration
+	deaf, heap := 0.0, 0.0
+	for range b.N {
+		w := visit(b, s, desktop)
+		w.ready()
+		w.choose(metal, "low-alloy-steel")
+		w.choose(limit+" >>> #pick", "pwht-p3-p4")
+		w.goTo("book")
+		eval[bool](w, "(window.deaf = 0, window.last = performance.now(), setInterval(() => { const now = performance.now(); deaf = Math.max(deaf, now - last); last = now }, 10), true)")
+		start := time.Now()
+		w.takeMany(10_000)
+		total += time.Since(start)
+		deaf = max(deaf, eval[float64](w, "deaf"))
+		heap = max(heap, eval[float64](w, "performance.memory.usedJSHeapSize / 1e6"))
+	}
+	b.ReportMetric(float64(total.Milliseconds())/float64(b.N), "ms/job")
+	b.ReportMetric(deaf, "ms-deaf")
+	b.ReportMetric(heap, "MB-page")
+}
+
+// A traverse across a weld is drawn with its limit, and the peak of the
+// heat-affected zone is named.
+func TestBookTraverse(t *testing.T) {
+	s := startSite(t, serve.Options{})
+	w := visit(t, s, phone)
+	w.choose(metal, "low-alloy-steel")
+	w.choose(limit+" >>> #pick", "pwht-p3-p4")
+	w.goTo("book")
+	w.takeText("label,zone,position_mm,r1,r2,r3\nT1,base,0,430,432,428\nT2,haz,6,470,474,468\nT3,haz,8.5,505,500,503\nT4,weld,12,480,484,478\nT5,haz,17,478,470,474\nT6,base,24,433,431,435\n")
+	w.click(takePart + " >>> #take")
+	w.waitForText(book+" >>> strike-summary >>> #peak", "hardest at T3")
+	plot := book + " >>> strike-summary >>> .plot"
+	w.waitFor(element(plot) + ".querySelectorAll('circle').length === 6")
+	w.waitFor(element(plot) + ".textContent.includes('Limit 225 HBW')")
+	w.checkAccessible("a traverse")
+	w.reveal(plot)
+	w.screenshot("book-traverse")
 	w.checkClean(s)
 }

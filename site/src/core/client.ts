@@ -76,9 +76,7 @@ export class Core extends EventTarget {
 
   /** The fragment of a record's link, without "#". */
   async encodeLink(record: core.Record): Promise<string> {
-    const text = await this.ask("encodeLink", JSON.stringify(record));
-    if (text.startsWith("{")) parsed(text);
-    return text;
+    return plain(await this.ask("encodeLink", JSON.stringify(record)));
   }
 
   /** The rows of a list for some records, in their order. */
@@ -95,9 +93,11 @@ export class Core extends EventTarget {
     return this.ask("readTable", JSON.stringify(request)).then(parsed<core.Table>);
   }
 
-  /** A table for other programs, as CSV. */
-  writeTable(records: core.Record[]): Promise<string> {
-    return this.ask("writeTable", JSON.stringify({ v: catalogue.recordVersion, records } satisfies core.Book));
+  /** A table for other programs, as CSV; a part behind the first goes on
+   * without headers. */
+  writeTable(records: core.Record[], continued: boolean): Promise<string> {
+    const book: core.TableBook = { v: catalogue.recordVersion, records, continued };
+    return this.ask("writeTable", JSON.stringify(book)).then(plain);
   }
 
   private ask(call: Call, text: string): Promise<string> {
@@ -161,6 +161,12 @@ export class Core extends EventTarget {
     this.state = state;
     this.dispatchEvent(new Event("state"));
   }
+}
+
+/** An answer that is no JSON, unless it is a refusal. */
+function plain(text: string): string {
+  if (text.startsWith("{")) parsed(text);
+  return text;
 }
 
 function parsed<T>(text: string): T {

@@ -98,6 +98,16 @@ export interface BookValue {
   shownHigh: string;
 }
 
+/** TableBook is a book to write as a table. */
+export interface TableBook {
+  /** version of this layout, 1 */
+  v: number;
+  /** at most MaxRecords */
+  records: RecordText[];
+  /** whether it goes on from a part before, and has no row of headers */
+  continued?: boolean;
+}
+
 /** Catalogue is what a record can choose from, each with its source. */
 export interface Catalogue {
   edition: string;

@@ -846,7 +846,7 @@ export const sentences: Sentence[] = [
   {
     "code": "anchor-outside-model",
     "kind": "error",
-    "message": "The field {path} is {got}, but the model of {metal} is given from {lo} to {hi} {scale}. Correct the reading or the metal, or make an own curve.",
+    "message": "The field {path} is {got}, but the model of {metal} is given from {lo:1} to {hi:1} {scale}. Correct the reading or the metal, or make an own curve.",
     "remedy": "",
     "source": ""
   },

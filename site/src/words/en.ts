@@ -410,6 +410,7 @@ const own = {
   "give.json.all": "Save all jobs as JSON",
   "give.csv": "Save as CSV",
   "give.report": "Report of the spots shown",
+  "give.writing": "Writing: {done} of {all} spots",
   "give.done": "The file is handed to the browser.",
   "give.failed": "The file could not be made. Try again.",
 
