@@ -179,7 +179,7 @@ func (e *evaluation) overOwnCurve(leg scale.Leg) (value float64, terms []stats.T
 	terms = e.leading()
 	carry(terms, must(curve.MeanSlope(c, hl, stats.CombineStandard(terms))))
 	terms = append(terms, c.Term(hl, e.value))
-	if to == c.To {
+	if to == c.To && to == c.served {
 		return e.value, terms, nil
 	}
 	if math.IsNaN(e.hv) {
@@ -187,9 +187,12 @@ func (e *evaluation) overOwnCurve(leg scale.Leg) (value float64, terms []stats.T
 		errors.As(err, &outside)
 		return math.NaN(), nil, outside
 	}
-	v, err := leg.At(e.hv)
-	if errors.As(err, &outside) {
-		return math.NaN(), nil, outside
+	v := scale.Value{Value: e.hv}
+	if to != scale.HV {
+		var err error
+		if v, err = leg.At(e.hv); errors.As(err, &outside) {
+			return math.NaN(), nil, outside
+		}
 	}
 	if c.To != scale.HV {
 		carry(terms, must(curve.MeanSlope(c.back, e.value, stats.CombineStandard(terms))))

@@ -1,9 +1,9 @@
 package convert
 
 import (
-	"cmp"
 	"math"
 	"slices"
+	"sort"
 	"strconv"
 	"strings"
 
@@ -233,7 +233,7 @@ func newTraverse(rows []BookRow, key scale.Key) Traverse {
 		}
 		t.Points = append(t.Points, p)
 	}
-	slices.SortStableFunc(t.Points, func(a, b TraversePoint) int { return cmp.Compare(a.Position, b.Position) })
+	sort.Stable(byPosition(t.Points))
 	t.Min, t.Max = sharedLimit(rows, t.Points, key)
 	if t.Peak != nil {
 		t.Code = "traverse-peak"
@@ -242,6 +242,14 @@ func newTraverse(rows []BookRow, key scale.Key) Traverse {
 	}
 	return t
 }
+
+// byPosition is sorted by package sort: package slices would compile its own
+// sorting for these points alone.
+type byPosition []TraversePoint
+
+func (p byPosition) Len() int           { return len(p) }
+func (p byPosition) Less(i, j int) bool { return p[i].Position < p[j].Position }
+func (p byPosition) Swap(i, j int)      { p[i], p[j] = p[j], p[i] }
 
 // sharedLimit is the limit that all points have, if it stands in a scale.
 func sharedLimit(rows []BookRow, points []TraversePoint, key scale.Key) (least, greatest *float64) {

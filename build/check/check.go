@@ -19,6 +19,10 @@ import (
 // staticcheck is pinned, so that a newer one cannot fail what passed before.
 const staticcheck = "honnef.co/go/tools/cmd/staticcheck@v0.8.2"
 
+// testLimit is how long the tests of one package may take: those in the browser
+// are many, and a machine may be slow.
+const testLimit = "25m"
+
 var (
 	// goFolders are the folders with Go sources.
 	goFolders = []string{"build", "convert", "wasm", filepath.Join("site", "e2e")}
@@ -137,6 +141,6 @@ func (c checker) wasmTests(ctx context.Context) error {
 // tests runs all tests, those in the browser among them, and shows their lines
 // as they come.
 func (c checker) tests(ctx context.Context) error {
-	_, err := command.Command{Dir: c.root, Out: c.out, Args: []string{"go", "test", "./..."}}.Run(ctx)
+	_, err := command.Command{Dir: c.root, Out: c.out, Args: []string{"go", "test", "-timeout", testLimit, "./..."}}.Run(ctx)
 	return err
 }

@@ -25,39 +25,47 @@ func (s *Solution) own() error {
 	for _, i := range order {
 		pairs = append(pairs, s.Definition.Pairs[i])
 	}
-	fits := map[Form]*fitted{}
-	excess := math.Inf(1)
-	for _, form := range []Form{Straight, Power, Quadratic} {
-		f, refused := fitForm(form, pairs)
-		c := Candidate{Form: form, Refused: refused}
-		if refused != "" {
-			c.Reason = wording.Say(refused, wording.Params{"n": float64(len(pairs)), "least": float64(leastQuadratic)}).Message
+	best, fits := choose(pairs)
+	if best < 0 {
+		return wording.NewError("curve-not-rising", "pairs", wording.Params{"scale": string(s.Definition.Scale)})
+	}
+	for _, f := range fits {
+		c := Candidate{Form: f.form, Refused: f.refused}
+		if f.refused != "" {
+			c.Reason = wording.Say(f.refused, wording.Params{"n": float64(len(pairs)), "least": float64(leastQuadratic)}).Message
 		} else {
-			fits[form] = f
 			per := f.chiSquare / float64(f.dof)
-			c.ChiSquare, excess = &per, min(excess, per)
+			c.ChiSquare, c.AICc, c.LeaveOneOut = &per, &f.aicc, f.leaveOneOut(pairs)
 		}
 		s.Fit.Candidates = append(s.Fit.Candidates, c)
 	}
-	var chosen *Candidate
-	for i := range s.Fit.Candidates {
-		c := &s.Fit.Candidates[i]
-		f := fits[c.Form]
-		if f == nil {
+	chosen := &s.Fit.Candidates[best]
+	s.Fit.Form, s.Fit.AICc, s.Fit.LeaveOneOut = chosen.Form, chosen.AICc, chosen.LeaveOneOut
+	s.use(fits[best], pairs, order)
+	return nil
+}
+
+// choose fits each form to pairs, which stand in the order of their readings, and
+// finds the best; best is below 0 where every form is refused.
+func choose(pairs []Pair) (best int, fits [3]*fitted) {
+	excess := math.Inf(1)
+	for i, form := range [...]Form{Straight, Power, Quadratic} {
+		fits[i] = fitForm(form, pairs)
+		if f := fits[i]; f.refused == "" {
+			excess = min(excess, f.chiSquare/float64(f.dof))
+		}
+	}
+	best = -1
+	for i, f := range fits {
+		if f.refused != "" {
 			continue
 		}
-		aicc := f.criterion(max(1, excess))
-		c.AICc, c.LeaveOneOut = &aicc, f.leaveOneOut(pairs)
-		if chosen == nil || aicc < *chosen.AICc {
-			chosen = c
+		f.aicc = f.criterion(max(1, excess))
+		if best < 0 || f.aicc < fits[best].aicc {
+			best = i
 		}
 	}
-	if chosen == nil {
-		return wording.NewError("curve-not-rising", "pairs", wording.Params{"scale": string(s.Definition.Scale)})
-	}
-	s.Fit.Form, s.Fit.AICc, s.Fit.LeaveOneOut = chosen.Form, chosen.AICc, chosen.LeaveOneOut
-	s.use(fits[chosen.Form], pairs, order)
-	return nil
+	return best, fits
 }
 
 // use makes a form the curve.
@@ -85,14 +93,19 @@ func (s *Solution) use(f *fitted, pairs []Pair, order []int) {
 	s.Curve = curve.Law{Lo: s.lo, Hi: s.hi, Value: f.value, Derivative: f.slope}
 	s.standard = func(hl, _ float64) float64 { return math.Hypot(birge*f.standard(hl), scatter) }
 	for n, i := range order {
-		without, p := f.without(n, pairs), &pairs[n]
-		if without == nil {
+		p := &pairs[n]
+		best, others := choose(without(n, pairs)) // which may come to another form
+		if best < 0 {
 			continue
 		}
-		apart := without.apart(p)
-		influence := (f.value(p.HL) - without.value(p.HL)) / s.standard(p.HL, 0)
+		other := others[best]
+		apart, limit := other.apart(p)
+		influence := (f.value(p.HL) - other.value(p.HL)) / s.standard(p.HL, 0)
 		if finite(apart, influence) {
 			s.Fit.Residuals[i].LeftOut, s.Fit.Residuals[i].Influence = &apart, &influence
+			if beyond := math.Abs(apart) / limit; beyond > s.far.beyond {
+				s.far = farPair{i, beyond}
+			}
 		}
 	}
 }
@@ -102,13 +115,16 @@ type fitted struct {
 	form      Form
 	line      *stats.Polynomial // of a power, in the logarithms
 	chiSquare float64           // in the coordinates of the pairs, so that forms compare
-	dof       int
+	n, dof    int               // pairs, and less parameters
+	aicc      float64
+	refused   string // code of the reason why it cannot be used; "" if it can
 }
 
-// fitForm fits a form. Where it cannot be used, refused is the code of the reason.
-func fitForm(form Form, pairs []Pair) (f *fitted, refused string) {
+// fitForm fits a form, and says whether it can be used.
+func fitForm(form Form, pairs []Pair) *fitted {
+	f := fitPairs(form, pairs)
 	var code string
-	switch f = fitPairs(form, pairs); {
+	switch {
 	case form == Quadratic && len(pairs) < leastQuadratic:
 		code = "form-few-pairs"
 	case f == nil:
@@ -116,7 +132,10 @@ func fitForm(form Form, pairs []Pair) (f *fitted, refused string) {
 	case !f.rises(pairs[0].HL, pairs[len(pairs)-1].HL):
 		code = "form-not-rising"
 	}
-	return f, code
+	if code != "" {
+		return &fitted{form: form, refused: code}
+	}
+	return f
 }
 
 // fitPairs fits a form; nil where that fails.
@@ -136,7 +155,7 @@ func fitPairs(form Form, pairs []Pair) *fitted {
 	if line == nil || line.DoF < 1 {
 		return nil
 	}
-	f := &fitted{form: form, line: line, dof: line.DoF}
+	f := &fitted{form: form, line: line, n: len(pairs), dof: line.DoF}
 	for i := range pairs {
 		p := &pairs[i]
 		r := p.Value - f.value(p.HL)
@@ -188,17 +207,13 @@ func (f *fitted) rises(lo, hi float64) bool {
 // criterion is Akaike's, corrected for few pairs, with the variances of the
 // pairs excess times as large.
 func (f *fitted) criterion(excess float64) float64 {
-	p := 2.0 // parameters
-	if f.form == Quadratic {
-		p = 3
-	}
-	n := p + float64(f.dof)
+	n, p := float64(f.n), float64(f.n-f.dof) // pairs and parameters
 	return f.chiSquare/excess + 2*p + 2*p*(p+1)/(n-p-1)
 }
 
-// without is the form fitted to all pairs but one; nil where that fails.
-func (f *fitted) without(i int, pairs []Pair) *fitted {
-	return fitPairs(f.form, append(append(make([]Pair, 0, len(pairs)), pairs[:i]...), pairs[i+1:]...))
+// without is the pairs but for one.
+func without(i int, pairs []Pair) []Pair {
+	return append(append(make([]Pair, 0, len(pairs)), pairs[:i]...), pairs[i+1:]...)
 }
 
 // leaveOneOut is the root mean square of what each pair differs by from the
@@ -206,7 +221,7 @@ func (f *fitted) without(i int, pairs []Pair) *fitted {
 func (f *fitted) leaveOneOut(pairs []Pair) *float64 {
 	sum := 0.0
 	for i := range pairs {
-		w := f.without(i, pairs)
+		w := fitPairs(f.form, without(i, pairs))
 		if w == nil {
 			return nil
 		}
@@ -220,11 +235,29 @@ func (f *fitted) leaveOneOut(pairs []Pair) *float64 {
 	return &rms
 }
 
+// farPair is the pair that lies farthest off the curve through the others, in
+// units of how far it may.
+type farPair struct {
+	index  int
+	beyond float64
+}
+
+// farOff is how many units of uncertainty a pair may lie off the curve through
+// the others (common practice, no source).
+const farOff = 3.0
+
 // apart is how far a pair lies above a curve that was fitted without it, in units
-// of the uncertainty of that.
-func (f *fitted) apart(p *Pair) float64 {
-	birge := math.Sqrt(max(1, f.chiSquare/float64(f.dof)))
-	return (p.Value - f.value(p.HL)) / (birge * math.Hypot(math.Sqrt(f.variance(p)), f.standard(p.HL)))
+// of the uncertainty of that, and how far it may: farther where that uncertainty
+// is itself only known from the pairs.
+func (f *fitted) apart(p *Pair) (apart, limit float64) {
+	u := math.Hypot(math.Sqrt(f.variance(p)), f.standard(p.HL))
+	limit = farOff
+	if per := f.chiSquare / float64(f.dof); per > 1 {
+		u *= math.Sqrt(per)
+		const level = 0.05 // that any of the pairs is taken for one by chance
+		limit = max(limit, stats.StudentFactor(1-level/float64(f.n+1), float64(f.dof)))
+	}
+	return (p.Value - f.value(p.HL)) / u, limit
 }
 
 // equation writes the form for reading.

@@ -32,6 +32,7 @@ type Solution struct {
 	standard func(hl, value float64) float64 // standard uncertainty of a value, in To
 	dof      stats.DoF
 	lo, hi   float64 // span of the pairs
+	far      farPair
 }
 
 // Make fits a definition, and works out what there is to see of it. An error is
@@ -296,7 +297,7 @@ func (s *Solution) describePairs() {
 	k := stats.StudentFactor(bandConfidence, math.Inf(1))
 	bar := func(v, u float64) []float64 { return []float64{v - k*u, v + k*u} }
 	sum := 0.0
-	for i := range s.Definition.Pairs {
+	for _, i := range byReading(s.Definition.Pairs) {
 		p, r := &s.Definition.Pairs[i], &s.Fit.Residuals[i]
 		uHL, uValue := p.UHL, p.UValue
 		if s.Definition.Kind == Table {

@@ -7,7 +7,6 @@ import (
 )
 
 const (
-	farOff      = 3.0  // units of uncertainty that a pair may lie off the others' curve
 	bunchedFrom = 0.5  // share of the span without a pair
 	narrowSpan  = 0.05 // of the reading
 	farFrom     = 3.0  // units of uncertainty that curve and model may lie apart
@@ -53,18 +52,13 @@ func (s *Solution) warnOfPlaces() {
 // warnOfFarPair warns of the pair that lies farthest off the curve through the
 // others, if that is far.
 func (s *Solution) warnOfFarPair() {
-	worst := -1
-	for i, r := range s.Fit.Residuals {
-		if r.LeftOut != nil && (worst < 0 || math.Abs(*r.LeftOut) > math.Abs(*s.Fit.Residuals[worst].LeftOut)) {
-			worst = i
-		}
-	}
-	if worst < 0 || math.Abs(*s.Fit.Residuals[worst].LeftOut) <= farOff {
+	if s.far.beyond <= 1 {
 		return
 	}
-	p, r := &s.Definition.Pairs[worst], &s.Fit.Residuals[worst]
-	s.find("pair-far-off", inPair(worst, "value"), wording.Params{
-		"pair": float64(worst + 1), "hl": p.HL, "value": p.Value, "scale": string(s.Definition.Scale),
+	i := s.far.index
+	p, r := &s.Definition.Pairs[i], &s.Fit.Residuals[i]
+	s.find("pair-far-off", inPair(i, "value"), wording.Params{
+		"pair": float64(i + 1), "hl": p.HL, "value": p.Value, "scale": string(s.Definition.Scale),
 		"times": math.Abs(*r.LeftOut), "influence": math.Abs(*r.Influence)})
 }
 

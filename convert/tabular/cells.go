@@ -27,8 +27,7 @@ func (t *reader) set(r *record.Record, column int, cell string) *wording.Error {
 		r.Limit = &limit
 		return nil
 	}
-	f, _ := fieldAt(role) // every other role is a field
-	if want := f.set(r, cell, t.commaLists); want != "" {
+	if want := t.fields[column].set(r, cell, t.commaLists); want != "" {
 		return wording.NewError("row-cell", role, wording.Params{"column": t.nameOf(column), "want": want, "got": shorten(cell)})
 	}
 	return nil
@@ -45,8 +44,13 @@ func (t *reader) nameOf(column int) string {
 // reconcile makes device and scale of a record go together, where its row tells
 // one of them and the other stands in the defaults: as told, or by the header
 // over the readings.
-func (t *reader) reconcile(r *record.Record, told map[string]bool) {
-	if !told["device"] && !told["scale"] {
+func (t *reader) reconcile(r *record.Record, from row) {
+	var device, scaled bool // whether the row tells them
+	for i, c := range t.Columns {
+		device = device || c.Role == "device" && cellOf(from, i) != ""
+		scaled = scaled || c.Role == "scale" && cellOf(from, i) != ""
+	}
+	if !device && !scaled {
 		for _, c := range t.Columns {
 			if d, ok := deviceOver(c.Name); ok && c.Role == readingsField {
 				r.Device, r.Scale = d.Key, scale.Key(d.Scale)
@@ -55,9 +59,9 @@ func (t *reader) reconcile(r *record.Record, told map[string]bool) {
 		}
 	}
 	switch {
-	case told["device"] && !told["scale"]:
+	case device && !scaled:
 		r.Scale = ""
-	case told["scale"] && !told["device"]:
+	case scaled && !device:
 		r.Device = ""
 	}
 }

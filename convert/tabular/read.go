@@ -1,7 +1,6 @@
 package tabular
 
 import (
-	"cmp"
 	"fmt"
 	"slices"
 	"strings"
@@ -116,6 +115,7 @@ type reader struct {
 	err error
 
 	rows       []row
+	fields     []field // of the columns, zero where their role is none
 	commaLists bool    // whether a comma in a cell parts readings
 	spots      []*spot // in the order of their first rows
 	last       *spot   // that the row before belongs to
@@ -207,8 +207,10 @@ func (t *reader) arrange() {
 	if t.Layout == SpotARow {
 		t.drop(struckRole)
 	}
-	for i := range t.Columns {
-		t.Mapping[i] = t.Columns[i].Role
+	t.fields = make([]field, width)
+	for i, c := range t.Columns {
+		t.Mapping[i] = c.Role
+		t.fields[i], _ = fieldAt(c.Role)
 	}
 }
 
@@ -402,36 +404,35 @@ func cellOf(r row, i int) string {
 // readRows makes the records.
 func (t *reader) readRows() {
 	t.labelled = map[string]*spot{}
+	refused := map[int]*wording.Error{} // by the number of the row
 	for _, r := range t.rows {
-		var refused *wording.Error
+		add := t.addSpot
 		if t.Layout == ReadingARow {
-			refused = t.addReading(r)
-		} else {
-			refused = t.addSpot(r)
+			add = t.addReading
 		}
-		if refused != nil {
-			t.refuse(r, refused)
+		if why := add(r); why != nil {
+			refused[r.number] = why
 		}
 	}
 	for _, s := range t.spots {
 		if err := s.record.Validate(); err != nil {
-			refused, ok := err.(*wording.Error)
+			why, ok := err.(*wording.Error)
 			if !ok {
 				panic(err) // Validate refuses in no other way
 			}
 			for _, r := range s.rows {
-				t.refuse(r, refused)
+				refused[r.number] = why
 			}
 			continue
 		}
 		t.Records = append(t.Records, s.record)
 		t.At = append(t.At, s.rows[0].number)
 	}
-	slices.SortStableFunc(t.Bad, func(a, b BadRow) int { return cmp.Compare(a.Row, b.Row) })
-}
-
-func (t *reader) refuse(r row, why *wording.Error) {
-	t.Bad = append(t.Bad, BadRow{Row: r.number, Cells: r.cells, Error: why})
+	for _, r := range t.rows {
+		if why := refused[r.number]; why != nil {
+			t.Bad = append(t.Bad, BadRow{Row: r.number, Cells: r.cells, Error: why})
+		}
+	}
 }
 
 // addSpot makes a record of a row.
@@ -449,13 +450,11 @@ func (t *reader) addSpot(r row) *wording.Error {
 // newSpot reads all cells of a row.
 func (t *reader) newSpot(r row) (*spot, *wording.Error) {
 	s := &spot{record: t.asked.Defaults, rows: []row{r}}
-	told := map[string]bool{}
 	for i, cell := range r.cells {
 		role := t.Columns[i].Role
 		if role == "" || role == struckRole || cell == "" {
 			continue
 		}
-		told[role] = true
 		if refused := t.set(&s.record, i, cell); refused != nil {
 			return nil, refused
 		}
@@ -463,6 +462,6 @@ func (t *reader) newSpot(r row) (*spot, *wording.Error) {
 	if s.record.Readings == nil {
 		s.record.Readings = []record.Reading{}
 	}
-	t.reconcile(&s.record, told)
+	t.reconcile(&s.record, r)
 	return s, nil
 }

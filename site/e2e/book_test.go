@@ -234,7 +234,7 @@ func TestBookReport(t *testing.T) {
 		}
 	}
 	text := strings.Join(pages, "")
-	for _, want := range []string{"432, 428, 435, 430, 431", "Repeatability", "Check on a test block: none", "HV (HLD) ±", "Probability that the spot conforms", "Coverage factor", "Signature"} {
+	for _, want := range []string{"432, 428, 435, 430, 431", "Repeatability", "Check on a test block: none", "HV (HLD) ±", "Probability that the spot conforms", "Coverage factor", "expanded uncertainty at 95 %", "Signature"} {
 		if strings.Count(text, strings.ReplaceAll(want, " ", "")) == 0 {
 			t.Errorf("the pages do not say %q:\n%s", want, text)
 		}

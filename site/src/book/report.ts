@@ -58,6 +58,9 @@ export class ReportElement extends LitElement {
         font-size: 1.15rem;
         font-weight: 700;
       }
+      .number {
+        white-space: nowrap;
+      }
       .sign {
         display: grid;
         grid-template-columns: 1fr 1fr 2fr;
@@ -193,6 +196,7 @@ export class ReportElement extends LitElement {
           </tbody>
         </table>
       </div>
+      <p class="soft">${confidences(this.spots).join(" ")}</p>
       ${this.struck()} ${cautions()} ${signature()}
     </article>`;
   }
@@ -235,7 +239,7 @@ export class ReportElement extends LitElement {
       <dl>${facts.map(([key, value]) => (value ? html`<div><dt>${say(`report.${key}`)}</dt><dd>${value}</dd></div>` : ""))}</dl>
       ${verdict(sheet)}
       <h3>${say("readings.title")}</h3>
-      ${readings(record, sheet)} ${block(record, sheet)} ${values(given)}
+      ${readings(record, sheet)} ${block(record, sheet)} ${values(record, given)}
       ${sheet.findings.length === 0
         ? ""
         : html`<h3>${say("findings.stop")}</h3>
@@ -281,9 +285,10 @@ function block(record: core.Record, sheet: core.Sheet) {
 }
 
 /** Each scale with its uncertainty and what it rests on. */
-function values(given: core.Row[]) {
+function values(record: core.Record, given: core.Row[]) {
   if (given.length === 0) return html`<p><b>${say("result.none")}.</b></p>`;
   return html`<h3>${say("result.title")}</h3>
+    <p class="soft">${confidence(record)}</p>
     ${wide(say("result.title"), html`<table>
       <thead>
         <tr>${["value", "interval", "basis"].map((key) => html`<th scope="col">${say(`report.${key}`)}</th>`)}</tr>
@@ -291,13 +296,23 @@ function values(given: core.Row[]) {
       <tbody>
         ${given.map(
           (row) => html`<tr>
-            <th scope="row">${say("book.row.value", { value: row.shown, expanded: row.shownExpanded })}</th>
-            <td>${row.shownLow} – ${row.shownHigh}</td>
+            <th scope="row" class="number">${say("book.row.value", { value: row.shown, expanded: row.shownExpanded })}</th>
+            <td class="number">${row.shownLow} – ${row.shownHigh}</td>
             <td>${row.path.map((step) => html`<div>${step.step}, ${say(`basis.${step.basis}`)}. <span class="soft">${step.source}</span></div>`)}</td>
           </tr>`,
         )}
       </tbody>
     </table>`)}`;
+}
+
+/** What ± stands for, in one sentence. */
+function confidence(record: core.Record): string {
+  return say("result.confidence", { percent: (record.confidence ?? 0.95) * 100 });
+}
+
+/** The same for many spots: each sentence once. */
+function confidences(spots: Spot[]): string[] {
+  return [...new Set(spots.map(({ kept }) => confidence(kept.record)))];
 }
 
 /** What may be wider than a phone: it scrolls by itself. */

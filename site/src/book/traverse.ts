@@ -67,7 +67,8 @@ export function traverse({ traverse: { points, min, max }, scale }: core.Summary
     ${bounds.map((v) => svg`<line class="limit" x1=${left} x2=${width - right} y1=${y(v)} y2=${y(v)} /><text class="limit-text" x=${width - right} y=${y(v) - 4} text-anchor="end">${say("traverse.limit", { value: v, scale })}</text>`)}
     <path class="line" d=${path(measured.map((p) => [x(p.position), y(p.value)]))} />
     ${measured.map((p) => svg`<line class="bar" x1=${x(p.position)} x2=${x(p.position)} y1=${y(p.low)} y2=${y(p.high)} /><circle class="dot ${p.zone ?? ""}" cx=${x(p.position)} cy=${y(p.value)} r="4" />`)}
-  </svg>`;
+  </svg>
+    <p class="soft">${say("traverse.key")}</p>`;
 }
 
 /** The same in words, for whoever cannot see the picture. */

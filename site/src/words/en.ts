@@ -343,6 +343,7 @@ const own = {
   "traverse.title": "Traverse",
   "traverse.label": "Plot of {n} spots along the weld in {scale}, each with its uncertainty. The table below says the same.",
   "traverse.position": "Position, mm",
+  "traverse.key": "Filled: heat-affected zone. The bars are the uncertainty.",
   "traverse.limit": "Limit {value} {scale}",
   "traverse.table": "Values along the traverse",
   "traverse.spot": "Spot",
